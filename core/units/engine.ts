@@ -1,0 +1,34 @@
+import {
+  type FactoryFunctionMap,
+  addDependencies,
+  create,
+  divideDependencies,
+  multiplyDependencies,
+  parseDependencies,
+  powDependencies,
+  subtractDependencies,
+  unaryMinusDependencies,
+  unaryPlusDependencies,
+  unitDependencies,
+  createUnitDependencies,
+  UnitDependencies,
+} from 'mathjs'
+
+const factories = {
+  addDependencies,
+  createUnitDependencies,
+  divideDependencies,
+  multiplyDependencies,
+  parseDependencies,
+  powDependencies,
+  subtractDependencies,
+  unaryMinusDependencies,
+  unaryPlusDependencies,
+  unitDependencies,
+  UnitDependencies,
+} as FactoryFunctionMap // declared through an index signature, which strict checking reads as possibly undefined
+
+/** One mathjs instance with units, parsing and the four operations; nothing else is reachable. */
+export const engine = create(factories, {})
+
+engine.createUnit('rpm', { definition: `${(2 * Math.PI) / 60} rad/s` })

@@ -1,0 +1,32 @@
+import type { ApiError } from '../../electron/api/contract.ts'
+import type { Project } from '../../core/project/project.ts'
+import type { Evaluation } from '../../core/results.ts'
+import type { UnitSystem } from '../../core/units/dimensions.ts'
+
+/** The open project with its results and history, as every page sees it. All members are reactive. */
+export interface Desk {
+  /** id of the open project in the library; null while the Shelf is shown */
+  readonly id: string | null
+  readonly project: Project
+  /** of the present project, or of the last one while a newer is being computed; null before the first */
+  readonly evaluation: Evaluation | null
+  readonly evaluating: boolean
+  /** 'saved', 'saving', or what went wrong with the last save */
+  readonly saveState: 'saved' | 'saving' | ApiError
+  readonly units: UnitSystem
+  /** the speed at which every view stands [rad/s] */
+  readonly cursorSpeed: number
+  setCursorSpeed(speed: number): void
+  /**
+   * Changes the project. `recipe` gets a private copy and edits it in place.
+   * Changes with the same `gesture` in quick succession are one step of undo (dragging, typing).
+   */
+  change(what: string, recipe: (draft: Project) => void, gesture?: string): void
+  readonly canUndo: string | null
+  readonly canRedo: string | null
+  undo(): void
+  redo(): void
+  open(id: string): Promise<void>
+  /** waits for the pending save, then goes back to the Shelf */
+  close(): Promise<void>
+}

@@ -1,0 +1,15 @@
+import { svelte } from '@sveltejs/vite-plugin-svelte'
+import { defineConfig } from 'vite'
+
+export default defineConfig({
+  root: 'renderer',
+  base: './',
+  plugins: [svelte()],
+  build: {
+    outDir: '../out/pages',
+    emptyOutDir: true,
+    target: 'es2023',
+    chunkSizeWarningLimit: 1500,
+  },
+  worker: { format: 'es' },
+})
