@@ -1,18 +1,16 @@
 import { svelte } from '@sveltejs/vite-plugin-svelte'
 import { defineConfig } from 'vitest/config'
 
+const report = process.env['STILLBED_TEST_REPORT']
+const building = { globalSetup: ['test/setup/build.ts'] }
+
 export default defineConfig({
   test: {
+    reporters: report ? ['default', 'json'] : ['default'],
+    ...(report ? { outputFile: { json: report } } : {}),
     projects: [
       { test: { name: 'core', include: ['test/core/**/*.test.ts'], testTimeout: 30_000 } },
-      {
-        test: {
-          name: 'shell',
-          include: ['test/electron/**/*.test.ts'],
-          testTimeout: 30_000,
-          globalSetup: ['test/setup/build.ts'],
-        },
-      },
+      { test: { name: 'shell', include: ['test/electron/**/*.test.ts'], testTimeout: 30_000, ...building } },
       {
         plugins: [svelte()],
         test: { name: 'pages', include: ['test/renderer/**/*.test.ts'], testTimeout: 30_000 },
@@ -21,10 +19,10 @@ export default defineConfig({
         test: {
           name: 'journeys',
           include: ['test/journeys/**/*.test.ts'],
-          testTimeout: 120_000,
+          testTimeout: 180_000,
           hookTimeout: 60_000,
           fileParallelism: false,
-          globalSetup: ['test/setup/build.ts'],
+          ...building,
         },
       },
     ],

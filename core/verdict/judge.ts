@@ -1,0 +1,45 @@
+import { assertNever } from '../errors.ts'
+import type { Project } from '../project/project.ts'
+import type { Requirement } from '../project/requirements.ts'
+import type { Evaluation, Verdict } from '../results.ts'
+import {
+  judgeAbsorberStroke,
+  judgeIsolation,
+  judgeTransmittedForce,
+  judgeVelocity,
+} from './response-verdicts.ts'
+import { judgeModeSeparation } from './separation-verdict.ts'
+import { judgeMountDeflection, judgeMountLoad } from './static-verdicts.ts'
+
+export type Computed = Omit<Evaluation, 'verdicts'>
+
+/**
+ * Judges every enabled requirement against what was computed. What could not be computed is
+ * `unknown`, with the reason; it never counts as met.
+ */
+export function judge(project: Project, computed: Computed): readonly Verdict[] {
+  return project.requirements
+    .filter((requirement) => requirement.enabled)
+    .map((requirement) => judgeOne(requirement, project, computed))
+}
+
+function judgeOne(requirement: Requirement, project: Project, computed: Computed): Verdict {
+  switch (requirement.kind) {
+    case 'isolation':
+      return judgeIsolation(requirement, project, computed)
+    case 'transmittedForce':
+      return judgeTransmittedForce(requirement, project, computed)
+    case 'vibrationVelocity':
+      return judgeVelocity(requirement, project, computed)
+    case 'modeSeparation':
+      return judgeModeSeparation(requirement, project, computed)
+    case 'mountLoad':
+      return judgeMountLoad(requirement, project, computed)
+    case 'mountDeflection':
+      return judgeMountDeflection(requirement, project, computed)
+    case 'absorberStroke':
+      return judgeAbsorberStroke(requirement, project, computed)
+    default:
+      return assertNever(requirement, 'requirement')
+  }
+}
