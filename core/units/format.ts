@@ -52,13 +52,19 @@ export function formatQuantity(
 export function formatPlain(value: number, digits = 4): string {
   if (!Number.isFinite(value)) return NOT_KNOWN
   if (value === 0) return '0'
-  const magnitude = Math.abs(value)
-  if (magnitude < 1e-4 || magnitude >= 1e7) return value.toExponential(digits - 1)
+  // rounded first: 9999.9 has one digit more before the point than it seems to have
   const rounded = Number(value.toPrecision(digits))
-  return magnitude >= 10 ** digits
-    ? rounded.toFixed(0)
-    : rounded
-        .toPrecision(digits)
-        .replace(/(\.\d*?)0+$/, '$1')
-        .replace(/\.$/, '')
+  const magnitude = Math.abs(rounded)
+  if (magnitude < 1e-4 || magnitude >= 1e7) {
+    return rounded
+      .toExponential(digits - 1)
+      .replace(/(\.\d*?)0+e/, '$1e')
+      .replace('.e', 'e')
+      .replace('e+', 'e')
+  }
+  if (magnitude >= 10 ** (digits - 1)) return rounded.toFixed(0)
+  return rounded
+    .toPrecision(digits)
+    .replace(/(\.\d*?)0+$/, '$1')
+    .replace(/\.$/, '')
 }

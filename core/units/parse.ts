@@ -6,33 +6,62 @@ import { engine } from './engine.ts'
 const OPERATORS = new Set(['+', '-', '*', '/', '^'])
 const MAX_LENGTH = 120
 
+type Spelling = readonly [RegExp, string]
+
 /** Spellings from the trade that mathjs does not know, as whole words. */
-const SPELLINGS: readonly (readonly [RegExp, string])[] = [
+const SPELLINGS: readonly Spelling[] = [
   [/µm|μm|\bmicrons?\b/g, 'um'],
   [/²/g, '^2'],
   [/³/g, '^3'],
+  [/⁻¹/g, '^-1'],
   [/[·×]/g, '*'],
   [/[−–]/g, '-'],
   [/°/g, ' deg'],
-  [/%/g, '*0.01'],
-  [/\bin\b(?!ch)/g, 'inch'],
+  [/%/g, ' percent'],
+  [/\bips\b/g, 'inch/s'],
+  [/\brev\/min\b|\br\/min\b|(?<![\d.,])1\/min\b|\bmin-1\b/g, 'rpm'],
+  [/\b(RPM|cpm|CPM)\b/g, 'rpm'],
+  // `oz-in`, `N-m` and `N.m` join units; a minus or a point between letters means nothing else
+  [/(?<=[a-z])[-.](?=[a-z])/gi, ' '],
+  [/\bin\b/g, 'inch'],
   [/\bmils\b/g, 'mil'],
   [/\blbm\b/g, 'lb'],
-  [/\bRPM\b|\br\/min\b|1\/min\b/g, 'rpm'],
 ]
 
-/** Units that are written with a blank or a dot between factors, such as `N s/m` or `oz in`. */
-function normalise(text: string): string {
-  let result = text.trim()
-  for (const [pattern, replacement] of SPELLINGS) result = result.replace(pattern, replacement)
-  return decimalComma(result)
+/** In a field for a force a pound can only be a pound-force. */
+const POUND_FORCE: readonly Spelling[] = [[/\blbs?\b/g, 'lbf']]
+
+/** What a word means only in a field of this dimension. */
+const SPELLINGS_WITHIN: Partial<Record<Dimension, readonly Spelling[]>> = {
+  force: POUND_FORCE,
+  moment: POUND_FORCE,
+  stiffness: POUND_FORCE,
+  damping: POUND_FORCE,
+  acceleration: [[/\bg\b/g, '*9.80665 m/s^2']],
+  // the grade is named by its figure in mm/s, without a unit
+  balanceGrade: [[/^G\s*([\d.]+)$/, '$1 mm/s']],
 }
 
-/** `2,5` is two and a half; `1,480` and `12,500.5` are read as thousands. */
-function decimalComma(text: string): string {
-  return text.replace(/\d[\d.,]*/g, (number) => {
+function normalise(text: string, dimension: Dimension): string {
+  let result = plainNumbers(text.trim())
+  for (const [pattern, replacement] of [...SPELLINGS, ...(SPELLINGS_WITHIN[dimension] ?? [])]) {
+    result = result.replace(pattern, replacement)
+  }
+  return result
+}
+
+/**
+ * `2,5` is two and a half; `1,480`, `12,500.5`, `12.500,5` and `12 500` are read as thousands.
+ * A group after a leading zero is none: `0,125` is an eighth.
+ */
+function plainNumbers(text: string): string {
+  const closed = text.replace(/(?<![\d.,])[1-9]\d{0,2}(?:[ \u00a0\u202f]\d{3})+(?!\d)/g, (number) =>
+    number.replace(/\s/g, ''),
+  )
+  return closed.replace(/\d[\d.,]*/g, (number) => {
     if (!number.includes(',')) return number
-    if (/^\d{1,3}(,\d{3})+(\.\d+)?$/.test(number)) return number.replaceAll(',', '')
+    if (/^[1-9]\d{0,2}(,\d{3})+(\.\d+)?$/.test(number)) return number.replaceAll(',', '')
+    if (/^[1-9]\d{0,2}(\.\d{3})+,\d+$/.test(number)) return number.replaceAll('.', '').replace(',', '.')
     return /^\d+,\d+$/.test(number) ? number.replace(',', '.') : number
   })
 }
@@ -73,14 +102,13 @@ export function parseQuantity(
   if (text.trim() === '' || text.length > MAX_LENGTH) return fail()
   let value: unknown
   try {
-    const node = engine.parse(normalise(text))
+    const node = engine.parse(normalise(text, dimension))
     assertAllowed(node)
     value = node.compile().evaluate({})
   } catch {
     return fail()
   }
-  // `30%` has already been divided by a hundred
-  const result = toBase(value, dimension, text.includes('%') ? 'base' : system)
+  const result = toBase(value, dimension, system)
   return result !== null && Number.isFinite(result) ? result : fail()
 }
 
@@ -89,7 +117,7 @@ function toBase(value: unknown, dimension: Dimension, system: UnitSystem | 'base
   if (typeof value === 'number') return value * factorOf(dimension, system)
   if (!engine.isUnit(value)) return null
   const unit = value as Unit
-  if (spec.base === '') return null
+  if (spec.base === '') return unit.equalBase(engine.unit('percent')) ? unit.toNumber('percent') / 100 : null
   if (dimension === 'shaftSpeed' && unit.equalBase(engine.unit('Hz')))
     return unit.toNumber('Hz') * 2 * Math.PI
   if (dimension === 'frequency' && unit.equalBase(engine.unit('rad/s')))
