@@ -74,8 +74,8 @@ export default ts.config(
         message: 'Pages reach the computer through the API only.',
       },
       {
-        regex: '/electron/(?!api/contract\\.ts$)',
-        message: "Of electron/, pages may import the contract's types only.",
+        regex: '/electron/(?!api/(contract|codec|bridge-name)\\.ts$)',
+        message: 'Of electron/, pages may import the contract and its codec only.',
       },
     ),
   },

@@ -5,12 +5,13 @@
 import { z } from 'zod'
 import type { MountType } from '../../core/project/mounts.ts'
 import type { Project } from '../../core/project/project.ts'
+import type { BridgeName } from './bridge-name.ts'
 
 const id = z.uuid()
 const none = z.null()
 /** Checked by `readProject` in the handler, which upgrades older versions and names the field. */
 const rawProject = z.record(z.string(), z.unknown())
-const settingsSchema = z.strictObject({
+export const settingsSchema = z.strictObject({
   sheet: z.enum(['system', 'light', 'dark']),
   units: z.enum(['SI', 'US']),
 })
@@ -104,3 +105,62 @@ export type Reply<T> =
 
 /** What the pages call, whichever host carries it. */
 export type Invoke = <E extends EndpointName>(endpoint: E, argument: Arg<E>) => Promise<Reply<Value<E>>>
+
+/**
+ * Commands of the desktop's menus, sent to the pages, which carry them out: the pages know
+ * what is open and what can be undone.
+ */
+export const MENU_COMMANDS = [
+  'project:new',
+  'project:import',
+  'project:export',
+  'project:rename',
+  'project:duplicate',
+  'project:report',
+  'shelf:show',
+  'edit:undo',
+  'edit:redo',
+  'search:show',
+  'sheet:light',
+  'sheet:dark',
+  'sheet:system',
+  'units:SI',
+  'units:US',
+  'step:1',
+  'step:2',
+  'step:3',
+  'step:4',
+  'step:5',
+  'step:6',
+  'step:7',
+  'step:8',
+  'step:9',
+] as const
+export type MenuCommand = (typeof MENU_COMMANDS)[number]
+
+/** What a host tells the pages unasked. */
+export interface HostEvents {
+  'menu:command': MenuCommand
+  /** a project file that was opened with Stillbed, already checked and stored: show it */
+  'project:show': { readonly id: string }
+}
+
+/** The pages' answer when the window wants to close: `text` is the project file that could not be saved. */
+export type ClosingAnswer =
+  | { readonly saved: true }
+  | { readonly saved: false; readonly message: string; readonly fileName: string; readonly text: string }
+
+/**
+ * `window.stillbed` in the desktop: one function per endpoint, named by `bridgeName`
+ * (`shelf:list` is `shelfList`), and the host's events. Absent in a browser, where the pages
+ * call over HTTP as `electron/loopback/server.ts` describes.
+ */
+export type DesktopBridge = {
+  readonly [E in EndpointName as BridgeName<E>]: (argument: Arg<E>) => Promise<Reply<Value<E>>>
+} & {
+  /** @returns a function that ends the listening */
+  readonly onMenuCommand: (listener: (command: HostEvents['menu:command']) => void) => () => void
+  readonly onProjectShow: (listener: (shown: HostEvents['project:show']) => void) => () => void
+  /** Called before the window closes: finish the pending save, then answer. One listener at a time. */
+  readonly onClosing: (listener: () => Promise<ClosingAnswer>) => () => void
+}

@@ -1,0 +1,21 @@
+import { readProject } from '../../core/project/read.ts'
+import type { AreaHandlers } from './context.ts'
+
+export const reportHandlers: AreaHandlers<'report'> = {
+  'report:pdf': async ({ project: raw }, { drawReport }) => {
+    const project = readProject(raw)
+    return { fileName: `${fileStem(project.job.name)}.pdf`, bytes: await drawReport(project) }
+  },
+}
+
+/** A project's name as a file name that every system takes. */
+export function fileStem(name: string): string {
+  const stem = name
+    .replace(/[^\p{L}\p{N} ._-]+/gu, ' ')
+    .replace(/\s+/g, ' ')
+    .trim()
+    .replace(/^\.+|\.+$/g, '')
+    .slice(0, 80)
+    .trim()
+  return stem === '' ? 'Stillbed report' : stem
+}
