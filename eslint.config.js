@@ -57,6 +57,8 @@ export default ts.config(
   {
     files: ['**/*.svelte', '**/*.svelte.ts'],
     languageOptions: { parserOptions: { parser: ts.parser, extraFileExtensions: ['.svelte'] } },
+    // the plugin's rule knows that $props() is always taken apart with `let`
+    rules: { 'prefer-const': 'off', 'svelte/prefer-const': 'error' },
   },
   {
     files: ['core/**/*.ts'],

@@ -10,6 +10,8 @@ export default defineConfig({
     emptyOutDir: true,
     target: 'es2023',
     chunkSizeWarningLimit: 1500,
+    // the pages' security policy lets fonts come from files only, never from inlined text
+    assetsInlineLimit: 0,
   },
   worker: { format: 'es' },
 })

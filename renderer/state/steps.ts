@@ -1,0 +1,90 @@
+import type { Project } from '../../core/project/project.ts'
+import type { Evaluation, Problem } from '../../core/results.ts'
+import type { Step } from './route.svelte.ts'
+
+export interface StepState {
+  readonly state: 'empty' | 'incomplete' | 'done'
+  /** what is missing or wrong, in words; empty when done */
+  readonly missing: string
+}
+
+const DONE: StepState = { state: 'done', missing: '' }
+
+/** State of each step of the path, as far as it can be told from the project and its results. */
+export function stepStates(
+  project: Project,
+  evaluation: Evaluation | null,
+): Readonly<Record<Step, StepState>> {
+  const problems = (evaluation?.problems ?? []).filter((problem) => problem.kind !== 'caution')
+  const machine = machineState(project, problems)
+  const mounts = mountsState(project, problems)
+  const response = responseState(evaluation, machine, mounts)
+  return {
+    machine,
+    mounts,
+    response,
+    absorber: absorberState(project, evaluation, problems),
+    report: reportState(project, evaluation, response),
+  }
+}
+
+function machineState(project: Project, problems: readonly Problem[]): StepState {
+  const { massProperties, duty } = project.machine
+  const bare =
+    (massProperties.from === 'typed' ? massProperties.mass === null : massProperties.parts.length === 0) &&
+    duty.runningSpeed === null &&
+    project.sources.length === 0
+  if (bare) return { state: 'empty', missing: 'not started' }
+  return fromProblems(problems, ['machine', 'sources'])
+}
+
+function mountsState(project: Project, problems: readonly Problem[]): StepState {
+  if (project.mounting.placed.length === 0) return { state: 'empty', missing: 'not started' }
+  return fromProblems(problems, ['mounting', 'footing'])
+}
+
+function responseState(evaluation: Evaluation | null, machine: StepState, mounts: StepState): StepState {
+  if (evaluation?.response) {
+    const unknown = evaluation.verdicts.filter((verdict) => verdict.status === 'unknown').length
+    return unknown === 0 ? DONE : incomplete(count(unknown, 'requirement') + ' not yet known')
+  }
+  const open = [machine.state !== 'done' && 'the machine', mounts.state !== 'done' && 'the mounts']
+  const names = open.filter((name) => name !== false)
+  if (names.length === 2) return { state: 'empty', missing: 'waits for machine and mounts' }
+  return names.length === 1 ? incomplete(`waits for ${names[0]}`) : incomplete('nothing excites the machine')
+}
+
+function absorberState(
+  project: Project,
+  evaluation: Evaluation | null,
+  problems: readonly Problem[],
+): StepState {
+  if (project.absorbers.length === 0) return { state: 'empty', missing: 'none, if none is needed' }
+  const found = fromProblems(problems, ['absorbers'])
+  if (found.state !== 'done') return found
+  const enabled = project.absorbers.filter((absorber) => absorber.enabled).length
+  const computed = evaluation?.absorbers.length ?? 0
+  return computed >= enabled ? DONE : incomplete('waits for its host')
+}
+
+function reportState(project: Project, evaluation: Evaluation | null, response: StepState): StepState {
+  if (!evaluation?.response) return { state: 'empty', missing: 'waits for results' }
+  if (project.job.name.trim() === '') return incomplete('the project has no name')
+  if (project.requirements.length === 0) return incomplete('no requirement to judge by')
+  return response.state === 'done' ? DONE : incomplete(response.missing)
+}
+
+function fromProblems(problems: readonly Problem[], roots: readonly string[]): StepState {
+  const mine = problems.filter((problem) => roots.some((root) => problem.field.startsWith(root)))
+  const first = mine[0]
+  if (!first) return DONE
+  return incomplete(mine.length === 1 ? first.message : `${first.message} (and ${mine.length - 1} more)`)
+}
+
+function incomplete(missing: string): StepState {
+  return { state: 'incomplete', missing }
+}
+
+function count(number: number, noun: string): string {
+  return `${number} ${noun}${number === 1 ? '' : 's'}`
+}
