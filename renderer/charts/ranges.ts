@@ -39,9 +39,9 @@ export function valueRange(
       : scale === 'dB'
         ? value + 3 * sign
         : value + 0.08 * sign * Math.abs(value)
-  // without limits these are infinities that never decide
-  const highestKept = beyond(Math.max(...wanted), 1)
-  const lowestKept = scale === 'linear' ? Math.min(...wanted) : beyond(Math.min(...wanted), -1)
+  const highestKept = wanted.length > 0 ? beyond(Math.max(...wanted), 1) : -Infinity
+  const lowestWanted = Math.min(...wanted) // infinite, and so without effect, when there is none
+  const lowestKept = scale === 'linear' || wanted.length === 0 ? lowestWanted : beyond(lowestWanted, -1)
   if (scale === 'linear') {
     const top = Math.max(Math.min(quantile(1), quantile(0.9) * 10 ** SPIKE_DECADES), highestKept)
     const bottom = Math.min(0, quantile(0), lowestKept)
