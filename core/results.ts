@@ -51,8 +51,10 @@ export interface MountStatics {
 }
 
 export interface Statics {
-  /** [N] */
+  /** of the machine and of every absorber on it [N] */
   readonly weight: number
+  /** of the absorbers alone, which hangs at their attachments [N] */
+  readonly absorberWeight: number
   readonly bodyDisplacement: Vec6
   /** rotation about x and about y [rad] */
   readonly tilt: readonly [aboutX: number, aboutY: number]

@@ -1,0 +1,165 @@
+import { responseAtSpeeds } from './excitation/at-speeds.ts'
+import { describeSource } from './excitation/describe.ts'
+import { groupByOrder, sourceLoad, type SourceLoad } from './excitation/order-loads.ts'
+import { sweepResponse } from './excitation/sweep.ts'
+import { install, type Installation } from './mounts/installation.ts'
+import type { PlacedAbsorber } from './mounts/machine-network.ts'
+import { chartRange, sweepSpeeds } from './mounts/speeds.ts'
+import { summariseMass } from './project/mass.ts'
+import type { Project } from './project/project.ts'
+import type { AbsorberResult, Evaluation, MassSummary, Problem, ResponseResult } from './results.ts'
+import { judge, type Computed } from './verdict/judge.ts'
+import { adviseLevers } from './verdict/levers.ts'
+
+export interface EvaluateOptions {
+  /** about how many speeds the curves have; left out: 2 000 */
+  readonly sweepPoints?: number
+}
+
+const SWEEP_POINTS = 2000
+/** Trials of levers need the judged values only, and those stand at resonances and given speeds. */
+const TRIAL_POINTS = 600
+
+/**
+ * Everything that can be known about a project: the one door for interface, batch and tests.
+ * Never throws for a project that the schema accepts; what cannot be computed is null, and
+ * `problems` says why, at the field.
+ */
+export function evaluate(project: Project, options: EvaluateOptions = {}): Evaluation {
+  const computed = compute(project, options.sweepPoints ?? SWEEP_POINTS)
+  const verdicts = adviseLevers(project, judge(project, computed), computed.modes, (changed) =>
+    judge(changed, compute(changed, TRIAL_POINTS)),
+  )
+  return { ...computed, verdicts }
+}
+
+function compute(project: Project, sweepPoints: number): Computed {
+  const { summary, problems: massProblems } = summariseMass(project.machine.massProperties)
+  const problems: Problem[] = [...massProblems, ...dutyProblems(project)]
+  const orders = ordersOf(project)
+  const bare = summary === null ? null : install(project, summary, [], orders)
+  problems.push(...(bare?.problems ?? []))
+  const absorbers: AbsorberResult[] = []
+  const placed = placedAbsorbers(project, absorbers)
+  const full =
+    summary === null || placed.length === 0 || bare === null || bare.modes === null
+      ? null
+      : install(project, summary, placed, orders)
+  const response = respondTo(project, summary, bare, full, sweepPoints, problems)
+  return {
+    problems,
+    massSummary: summary,
+    sourceSummaries: project.sources.map((source) => describeSource(source, project.machine, project.units)),
+    statics: full?.statics ?? bare?.statics ?? null,
+    modes: bare?.modes ?? null,
+    modesWithAbsorbers: full?.modes ?? null,
+    response,
+    absorbers,
+  }
+}
+
+/** Orders of the exciting forces and of the requirements; the shaft's own where there are none. */
+function ordersOf(project: Project): readonly number[] {
+  const orders = new Set<number>()
+  for (const source of project.sources) {
+    if (source.enabled) orders.add(source.kind === 'unbalance' ? 1 : source.order)
+  }
+  for (const requirement of project.requirements) {
+    if (requirement.enabled && requirement.kind === 'modeSeparation') {
+      for (const order of requirement.orders) orders.add(order)
+    }
+  }
+  if (orders.size === 0) orders.add(1)
+  return [...orders].toSorted((a, b) => a - b)
+}
+
+function dutyProblems(project: Project): readonly Problem[] {
+  const { runningSpeed, lowestSpeed, highestSpeed } = project.machine.duty
+  const problems: Problem[] = []
+  if (runningSpeed === null) {
+    problems.push({
+      field: 'machine.duty.runningSpeed',
+      message: 'Give the speed at which the machine runs.',
+      kind: 'missing',
+    })
+  }
+  if (lowestSpeed !== null && highestSpeed !== null && lowestSpeed > highestSpeed) {
+    problems.push({
+      field: 'machine.duty.lowestSpeed',
+      message: 'The lowest operating speed is above the highest.',
+      kind: 'caution',
+    })
+  } else if (
+    runningSpeed !== null &&
+    (runningSpeed < (lowestSpeed ?? 0) || runningSpeed > (highestSpeed ?? Infinity))
+  ) {
+    problems.push({
+      field: 'machine.duty.runningSpeed',
+      message: 'The running speed lies outside the operating speeds.',
+      kind: 'caution',
+    })
+  }
+  return problems
+}
+
+function placedAbsorbers(project: Project, results: readonly AbsorberResult[]): readonly PlacedAbsorber[] {
+  return project.absorbers.flatMap(({ id, enabled, host }) => {
+    const result = results.find((candidate) => candidate.id === id)
+    if (!enabled || host.kind !== 'mode' || !result) return []
+    const { mass, stiffness, damping } = result
+    return [{ id, mass, stiffness, damping, position: host.position, direction: host.direction }]
+  })
+}
+
+/** Loads of all enabled sources; null, with the reasons, when there is none or one is not known. */
+function knownLoads(
+  project: Project,
+  summary: MassSummary | null,
+  problems: Problem[],
+): readonly SourceLoad[] | null {
+  const active = project.sources.flatMap((source, index) => (source.enabled ? [{ source, index }] : []))
+  if (active.length === 0) {
+    problems.push({
+      field: 'sources',
+      message: 'Nothing excites the machine yet: add an exciting force.',
+      kind: 'missing',
+    })
+    return null
+  }
+  const amounts = active.map(({ source, index }) =>
+    sourceLoad(source, project.machine, summary?.centreOfGravity ?? [0, 0, 0], `sources[${index}]`),
+  )
+  problems.push(...amounts.flatMap((amount) => amount.problems))
+  const loads = amounts.flatMap(({ load }) => (load === null ? [] : [load]))
+  return loads.length === amounts.length ? loads : null
+}
+
+function respondTo(
+  project: Project,
+  summary: MassSummary | null,
+  bare: Installation | null,
+  full: Installation | null,
+  sweepPoints: number,
+  problems: Problem[],
+): ResponseResult | null {
+  const loads = knownLoads(project, summary, problems)
+  const observed = (full ?? bare)?.observed ?? null
+  if (loads === null || observed === null) return null
+  const modes = [...(bare?.modes ?? []), ...(full?.modes ?? [])]
+  const range = chartRange(project, modes)
+  if (range === null) return null
+  const orders = groupByOrder(loads)
+  const speeds = sweepSpeeds(range, modes, sweepPoints)
+  const { runningSpeed, furtherSpeeds } = project.machine.duty
+  const reported = [...(runningSpeed === null ? [] : [runningSpeed]), ...furtherSpeeds]
+  const without = full === null ? null : (bare?.observed ?? null)
+  return {
+    atSpeeds: responseAtSpeeds(observed, orders, reported),
+    sweep: sweepResponse(observed, orders, speeds),
+    sweepWithoutAbsorbers: without === null ? null : sweepResponse(without, orders, speeds),
+    runningWithoutAbsorbers:
+      without === null || runningSpeed === null
+        ? null
+        : (responseAtSpeeds(without, orders, [runningSpeed])[0] ?? null),
+  }
+}
