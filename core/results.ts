@@ -198,8 +198,10 @@ export interface AbsorberResult {
   readonly network: {
     readonly band: readonly [number, number]
     readonly peak: number
+    /** [Hz] */
     readonly peakAt: number
-    readonly peakWithout: number
+    /** null when a resonance in the band is not damped at all */
+    readonly peakWithout: number | null
   } | null
   /** single-freedom curves against frequency ratio g: objective without and with the absorber */
   readonly curve: {

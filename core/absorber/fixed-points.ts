@@ -38,7 +38,8 @@ export function fixedPointTuning(kind: Kind, massRatio: number): FixedPointTunin
   const squared = levelTuningSquared(kind, massRatio)
   if (squared === null || !(squared > 0)) return null
   const alpha = squared - 1
-  const points = kind.numerator === 'absolute' ? absolutePoints(massRatio, alpha) : relativePoints(massRatio, alpha)
+  const points =
+    kind.numerator === 'absolute' ? absolutePoints(massRatio, alpha) : relativePoints(massRatio, alpha)
   if (points === null || !(points[0] > -1)) return null
   const level = points.map((delta) => levelCoefficientSquared(kind, massRatio, alpha, delta) / (4 * squared))
   const [atP, atQ] = level
@@ -123,9 +124,7 @@ function levelCoefficientSquared(kind: Kind, mu: number, alpha: number, delta: n
   const undamped = delta * delta - alpha * delta - mu * (1 + alpha) * x
   const undampedSlope = 2 * delta - alpha - mu * (1 + alpha)
   const ratio = absolute ? (u * u) / x : (u * u) / (m * m * x)
-  return (
-    (-ratio * (kind.power / x - 2 / u - (2 * undampedSlope) / undamped)) / (kind.power / x - (2 * m) / v)
-  )
+  return (-ratio * (kind.power / x - 2 / u - (2 * undampedSlope) / undamped)) / (kind.power / x - (2 * m) / v)
 }
 
 /** Height of the curve with a locked absorber, which every curve shares at a fixed point. */

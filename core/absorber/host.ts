@@ -46,7 +46,11 @@ export function hostOf(
   }
   const mode = modes.find(({ number }) => number === host.mode)
   if (!mode) {
-    return { problems: [invalid(`${field}.host.mode`, `there is no mode ${host.mode}: the machine has ${modes.length}`)] }
+    return {
+      problems: [
+        invalid(`${field}.host.mode`, `there is no mode ${host.mode}: the machine has ${modes.length}`),
+      ],
+    }
   }
   if (!(mode.frequency > 0)) {
     return {

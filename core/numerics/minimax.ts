@@ -118,7 +118,11 @@ function nextStep(pieces: readonly Piece[], shift: number, longest: number): Ste
   }
   const length = Math.hypot(first.d[0], first.d[1])
   const short = Math.min(1, longest / length)
-  return { d: [first.d[0] * short, first.d[1] * short], length: length * short, predicted: first.predicted * short }
+  return {
+    d: [first.d[0] * short, first.d[1] * short],
+    length: length * short,
+    predicted: first.predicted * short,
+  }
 }
 
 interface QuadraticStep {

@@ -89,6 +89,10 @@ const size = z.discriminatedUnion('by', [
     ratio: optionalQuantity('ratio', 'absorber mass over host modal mass', { above: 0, max: 10 }),
   }),
   z.strictObject({ by: z.literal('mass'), mass: optionalQuantity('mass', 'absorber mass', { above: 0 }) }),
+  z.strictObject({ by: z.literal('stroke') }).meta({
+    description:
+      'the least mass whose travel at the tuned speed stays within strokeLimit; for a typed host with its force, tuned to one speed',
+  }),
 ])
 
 export const absorberSchema = z.strictObject({
