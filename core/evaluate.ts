@@ -1,10 +1,12 @@
+import { designAbsorber, type AbsorberContext } from './absorber/design.ts'
 import { responseAtSpeeds } from './excitation/at-speeds.ts'
 import { describeSource } from './excitation/describe.ts'
 import { groupByOrder, sourceLoad, type SourceLoad } from './excitation/order-loads.ts'
 import { sweepResponse } from './excitation/sweep.ts'
 import { install, type Installation } from './mounts/installation.ts'
-import type { PlacedAbsorber } from './mounts/machine-network.ts'
+import { MACHINE, type PlacedAbsorber } from './mounts/machine-network.ts'
 import { chartRange, sweepSpeeds } from './mounts/speeds.ts'
+import { pointReceptance } from './network/receptance.ts'
 import { summariseMass } from './project/mass.ts'
 import type { Project } from './project/project.ts'
 import type { AbsorberResult, Evaluation, MassSummary, Problem, ResponseResult } from './results.ts'
@@ -39,7 +41,7 @@ function compute(project: Project, sweepPoints: number): Computed {
   const orders = ordersOf(project)
   const bare = summary === null ? null : install(project, summary, [], orders)
   problems.push(...(bare?.problems ?? []))
-  const absorbers: AbsorberResult[] = []
+  const absorbers = designAbsorbers(project, summary, bare, problems)
   const placed = placedAbsorbers(project, absorbers)
   const full =
     summary === null || placed.length === 0 || bare === null || bare.modes === null
@@ -100,6 +102,38 @@ function dutyProblems(project: Project): readonly Problem[] {
     })
   }
   return problems
+}
+
+/** Every absorber that can be designed, switched on or not; what keeps the others from it goes to `problems`. */
+function designAbsorbers(
+  project: Project,
+  summary: MassSummary | null,
+  bare: Installation | null,
+  problems: Problem[],
+): readonly AbsorberResult[] {
+  const observed = bare?.observed ?? null
+  const context: AbsorberContext = {
+    modes: bare?.modes ?? null,
+    centreOfGravity: summary === null ? null : [...summary.centreOfGravity],
+    receptance:
+      observed === null
+        ? null
+        : (position, direction, frequencies) =>
+            pointReceptance(
+              observed.system,
+              observed.solver,
+              { node: MACHINE, position },
+              direction,
+              frequencies,
+            ),
+    runningSpeed: project.machine.duty.runningSpeed,
+    gravity: project.analysis.gravity,
+  }
+  return project.absorbers.flatMap((absorber, index) => {
+    const design = designAbsorber(absorber, index, context)
+    problems.push(...design.problems)
+    return design.result === null ? [] : [design.result]
+  })
 }
 
 function placedAbsorbers(project: Project, results: readonly AbsorberResult[]): readonly PlacedAbsorber[] {
