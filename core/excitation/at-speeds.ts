@@ -10,7 +10,7 @@ import {
   readRow,
   sizeSquared,
   type BlockVector,
-} from './block-reader.ts'
+} from '../network/block-reader.ts'
 import { orderLoadCase, type Observed } from './observed.ts'
 import { orderVector, type SourceLoad } from './order-loads.ts'
 
@@ -72,8 +72,8 @@ function detailOfOrder(
       readRow(stroke, block, strokes[index]!)
     })
     const at = (freedom: number, f: number): Complex => ({
-      re: block.re[freedom * BLOCK + f]!,
-      im: block.im[freedom * BLOCK + f]!,
+      re: block.motion.re[freedom * BLOCK + f]!,
+      im: block.motion.im[freedom * BLOCK + f]!,
     })
     for (let f = 0; f < block.count; f++) {
       const total = sumAt(forces, f)

@@ -9,7 +9,7 @@ import {
   readForce,
   readRow,
   sizeSquared,
-} from './block-reader.ts'
+} from '../network/block-reader.ts'
 import { orderLoadCase, type Observed } from './observed.ts'
 import type { SourceLoad } from './order-loads.ts'
 

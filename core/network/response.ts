@@ -1,5 +1,15 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized for n and BLOCK by construction */
-import { BLOCK, blockMatrix, factorBlock, solveBlock, type BlockMatrix } from '../numerics/block-symmetric.ts'
+import { combineParts, type ComplexParts } from '../numerics/block-combine.ts'
+import {
+  BLOCK,
+  blockMatrix,
+  entryAt,
+  factorBlock,
+  factorDiagonal,
+  solveBlock,
+  solveDiagonal,
+  type BlockMatrix,
+} from '../numerics/block-symmetric.ts'
 import type { System } from './assemble.ts'
 import { isUncoupled } from './damped-modes.ts'
 import { varyingPart, type Law } from './laws.ts'
@@ -31,8 +41,7 @@ export interface ResponseBlock {
   /** [rad/s], the block's own */
   readonly omega: Float64Array
   /** displacement of freedom j at frequency f of the block: j BLOCK + f */
-  readonly re: Float64Array
-  readonly im: Float64Array
+  readonly motion: ComplexParts
 }
 
 /**
@@ -86,34 +95,46 @@ export function respond(
   const n = solver.freedoms
   const matrix = blockMatrix(n)
   const modalLoads = loads.map((load) => toModal(solver, load))
-  const yRe = new Float64Array(n * BLOCK)
-  const yIm = new Float64Array(n * BLOCK)
-  const re = new Float64Array(n * BLOCK)
-  const im = new Float64Array(n * BLOCK)
+  const parts = () => ({ re: new Float64Array(n * BLOCK), im: new Float64Array(n * BLOCK) })
+  const modal = parts()
+  const physical = parts()
+  const rows = shapeRows(solver)
   const omega = new Float64Array(BLOCK)
   for (let first = 0; first < omegas.length; first += BLOCK) {
     const count = Math.min(BLOCK, omegas.length - first)
     for (let f = 0; f < count; f++) omega[f] = omegas[first + f]!
     fillMatrix(solver, matrix, omega, count)
-    if (solver.uncoupled) invertDiagonal(matrix, count)
+    if (solver.uncoupled) factorDiagonal(matrix, count)
     else factorBlock(matrix, count)
-    modalLoads.forEach((load, index) => {
-      fillLoad(load, n, omega, count, yRe, yIm)
-      if (solver.uncoupled) scaleByPivots(matrix, count, yRe, yIm)
-      else solveBlock(matrix, count, yRe, yIm)
-      fromModal(solver.shapes, n, count, yRe, yIm, re, im)
-      visit({ first, count, load: index, omega, re, im })
-    })
+    for (let load = 0; load < modalLoads.length; load++) {
+      fillLoad(modalLoads[load]!, n, omega, count, modal)
+      if (solver.uncoupled) solveDiagonal(matrix, count, modal)
+      else solveBlock(matrix, count, modal)
+      for (let i = 0; i < n; i++) {
+        combineParts(modal, rows.modes, BLOCK, rows.shapes[i]!, physical, i * BLOCK, count)
+      }
+      visit({ first, count, load, omega, motion: physical })
+    }
+  }
+}
+
+/** For each freedom its part in every mode. */
+function shapeRows({ shapes, freedoms: n }: ResponseSolver) {
+  return {
+    modes: Int32Array.from({ length: n }, (_, r) => r),
+    shapes: Array.from({ length: n }, (_, i) =>
+      Float64Array.from({ length: n }, (_, r) => shapes[r * n + i]!),
+    ),
   }
 }
 
 /** Only the diagonal is filled where nothing couples. */
 function fillMatrix(solver: ResponseSolver, matrix: BlockMatrix, omega: Float64Array, count: number): void {
   const n = solver.freedoms
-  const { re, im } = matrix
+  const { re, im } = matrix.matrix
   for (let r = 0; r < n; r++) {
     for (let s = solver.uncoupled ? r : 0; s <= r; s++) {
-      const at = ((r * (r + 1)) / 2 + s) * BLOCK
+      const at = entryAt(r, s)
       const stiffness = r === s ? solver.omegaSquared[r]! : 0
       const inertia = r === s ? 1 : 0
       const viscous = solver.viscous[r * n + s]!
@@ -130,43 +151,12 @@ function fillMatrix(solver: ResponseSolver, matrix: BlockMatrix, omega: Float64A
       const z = varyingPart(law, omega[f]!)
       for (let r = 0; r < n; r++) {
         for (let s = 0; s <= r; s++) {
-          const at = ((r * (r + 1)) / 2 + s) * BLOCK + f
+          const at = entryAt(r, s) + f
           const product = motion[r]! * motion[s]!
           re[at]! += z.re * product
           im[at]! += z.im * product
         }
       }
-    }
-  }
-}
-
-function invertDiagonal({ size, re, im, pivotRe, pivotIm }: BlockMatrix, count: number): void {
-  for (let r = 0; r < size; r++) {
-    const at = ((r * (r + 1)) / 2 + r) * BLOCK
-    for (let f = 0; f < count; f++) {
-      const a = re[at + f]!
-      const b = im[at + f]!
-      const square = a * a + b * b
-      pivotRe[r * BLOCK + f] = a / square
-      pivotIm[r * BLOCK + f] = -b / square
-    }
-  }
-}
-
-function scaleByPivots(
-  { size, pivotRe, pivotIm }: BlockMatrix,
-  count: number,
-  re: Float64Array,
-  im: Float64Array,
-): void {
-  for (let at = 0; at < size * BLOCK; at += BLOCK) {
-    for (let f = 0; f < count; f++) {
-      const a = re[at + f]!
-      const b = im[at + f]!
-      const c = pivotRe[at + f]!
-      const d = pivotIm[at + f]!
-      re[at + f] = a * c - b * d
-      im[at + f] = a * d + b * c
     }
   }
 }
@@ -192,8 +182,7 @@ function fillLoad(
   n: number,
   omega: Float64Array,
   count: number,
-  re: Float64Array,
-  im: Float64Array,
+  { re, im }: ComplexParts,
 ): void {
   for (let r = 0; r < n; r++) {
     const constantRe = load.constantRe[r]!
@@ -205,30 +194,6 @@ function fillLoad(
       const square = omega[f]! * omega[f]!
       re[at + f] = constantRe + square * squaredRe
       im[at + f] = constantIm + square * squaredIm
-    }
-  }
-}
-
-function fromModal(
-  shapes: Float64Array,
-  n: number,
-  count: number,
-  yRe: Float64Array,
-  yIm: Float64Array,
-  re: Float64Array,
-  im: Float64Array,
-): void {
-  re.fill(0)
-  im.fill(0)
-  for (let i = 0; i < n; i++) {
-    const to = i * BLOCK
-    for (let r = 0; r < n; r++) {
-      const shape = shapes[r * n + i]!
-      const from = r * BLOCK
-      for (let f = 0; f < count; f++) {
-        re[to + f]! += shape * yRe[from + f]!
-        im[to + f]! += shape * yIm[from + f]!
-      }
     }
   }
 }

@@ -1,4 +1,6 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized for n and BLOCK by construction */
+import { subtractProducts, type ComplexParts } from './block-combine.ts'
+
 /**
  * Solves A(f) x(f) = b(f) for a block of frequencies at once, A complex and symmetric (not
  * Hermitian) and small. Real and imaginary parts lie apart, the frequency innermost: the inner loops
@@ -14,121 +16,109 @@ export const BLOCK = 64
 
 export interface BlockMatrix {
   readonly size: number
-  /** packed lower triangle: entry (i, j <= i) of frequency f at (i (i + 1) / 2 + j) BLOCK + f */
-  readonly re: Float64Array
-  readonly im: Float64Array
+  /** packed lower triangle: entry (i, j <= i) of frequency f at `entryAt(i, j) + f` */
+  readonly matrix: ComplexParts
   /** multipliers of the elimination, same layout */
-  readonly factorRe: Float64Array
-  readonly factorIm: Float64Array
-  /** reciprocal pivots, n BLOCK */
-  readonly pivotRe: Float64Array
-  readonly pivotIm: Float64Array
+  readonly factor: ComplexParts
+  /** reciprocal pivots, entry i of frequency f at i BLOCK + f */
+  readonly pivot: ComplexParts
+}
+
+/** Offset of entry (i, j <= i) in a packed triangle. */
+export function entryAt(i: number, j: number): number {
+  return ((i * (i + 1)) / 2 + j) * BLOCK
 }
 
 export function blockMatrix(size: number): BlockMatrix {
-  const packed = ((size * (size + 1)) / 2) * BLOCK
-  const make = (length: number) => new Float64Array(length)
+  const make = (length: number) => ({ re: new Float64Array(length), im: new Float64Array(length) })
   return {
     size,
-    re: make(packed),
-    im: make(packed),
-    factorRe: make(packed),
-    factorIm: make(packed),
-    pivotRe: make(size * BLOCK),
-    pivotIm: make(size * BLOCK),
+    matrix: make(entryAt(size, 0)),
+    factor: make(entryAt(size, 0)),
+    pivot: make(size * BLOCK),
   }
 }
 
-/** Factors the first `count` matrices of the block; the packed triangle is used up. */
-export function factorBlock(block: BlockMatrix, count: number): void {
-  const { size: n, re, im, factorRe, factorIm } = block
-  for (let k = 0; k < n; k++) {
-    invertPivot(block, k, count)
-    const pivot = k * BLOCK
-    const { pivotRe, pivotIm } = block
-    for (let i = k + 1; i < n; i++) {
-      const at = ((i * (i + 1)) / 2 + k) * BLOCK
-      for (let f = 0; f < count; f++) {
-        const a = re[at + f]!
-        const b = im[at + f]!
-        const c = pivotRe[pivot + f]!
-        const d = pivotIm[pivot + f]!
-        factorRe[at + f] = a * c - b * d
-        factorIm[at + f] = a * d + b * c
-      }
+/**
+ * Factors the first `count` matrices of the block, column after column: what is left of column j
+ * after the earlier ones stays in `matrix` (unscaled) and its multiples by the pivot go to `factor`.
+ */
+export function factorBlock({ size: n, matrix, factor, pivot }: BlockMatrix, count: number): void {
+  for (let j = 0; j < n; j++) {
+    for (let i = j; i < n; i++) {
+      subtractProducts(
+        factor,
+        entryAt(j, 0),
+        BLOCK,
+        matrix,
+        entryAt(i, 0),
+        BLOCK,
+        j,
+        matrix,
+        entryAt(i, j),
+        count,
+      )
     }
-    for (let i = k + 1; i < n; i++) {
-      const left = ((i * (i + 1)) / 2 + k) * BLOCK
-      for (let j = k + 1; j <= i; j++) {
-        const right = ((j * (j + 1)) / 2 + k) * BLOCK
-        const at = ((i * (i + 1)) / 2 + j) * BLOCK
-        for (let f = 0; f < count; f++) {
-          const a = factorRe[left + f]!
-          const b = factorIm[left + f]!
-          const c = re[right + f]!
-          const d = im[right + f]!
-          re[at + f]! -= a * c - b * d
-          im[at + f]! -= a * d + b * c
-        }
-      }
+    invert(matrix, entryAt(j, j), pivot, j * BLOCK, count)
+    for (let i = j + 1; i < n; i++) {
+      multiply(matrix, entryAt(i, j), pivot, j * BLOCK, factor, entryAt(i, j), count)
     }
   }
 }
 
-function invertPivot({ re, im, pivotRe, pivotIm }: BlockMatrix, k: number, count: number): void {
-  const at = ((k * (k + 1)) / 2 + k) * BLOCK
-  const to = k * BLOCK
+/** Pivots of diagonal matrices: all there is to factor. */
+export function factorDiagonal({ size, matrix, pivot }: BlockMatrix, count: number): void {
+  for (let i = 0; i < size; i++) invert(matrix, entryAt(i, i), pivot, i * BLOCK, count)
+}
+
+/** Solves for one right side per frequency, in place: entry i of frequency f at i BLOCK + f. */
+export function solveBlock({ size: n, factor, pivot }: BlockMatrix, count: number, x: ComplexParts): void {
+  for (let i = 1; i < n; i++) {
+    subtractProducts(factor, entryAt(i, 0), BLOCK, x, 0, BLOCK, i, x, i * BLOCK, count)
+  }
+  for (let i = 0; i < n; i++) multiply(x, i * BLOCK, pivot, i * BLOCK, x, i * BLOCK, count)
+  for (let k = n - 2; k >= 0; k--) {
+    for (let i = k + 1; i < n; i++) {
+      subtractProducts(factor, entryAt(i, k), 0, x, i * BLOCK, 0, 1, x, k * BLOCK, count)
+    }
+  }
+}
+
+export function solveDiagonal({ size, pivot }: BlockMatrix, count: number, x: ComplexParts): void {
+  for (let i = 0; i < size; i++) multiply(x, i * BLOCK, pivot, i * BLOCK, x, i * BLOCK, count)
+}
+
+function invert(
+  { re, im }: ComplexParts,
+  at: number,
+  { re: toRe, im: toIm }: ComplexParts,
+  to: number,
+  count: number,
+): void {
   for (let f = 0; f < count; f++) {
     const a = re[at + f]!
     const b = im[at + f]!
     const square = a * a + b * b
-    pivotRe[to + f] = a / square
-    pivotIm[to + f] = -b / square
+    toRe[to + f] = a / square
+    toIm[to + f] = -b / square
   }
 }
 
-/** Solves for one right side per frequency, in place: entry i of frequency f at i BLOCK + f. */
-export function solveBlock(block: BlockMatrix, count: number, re: Float64Array, im: Float64Array): void {
-  const { size: n, factorRe, factorIm, pivotRe, pivotIm } = block
-  for (let i = 1; i < n; i++) {
-    for (let k = 0; k < i; k++) {
-      eliminate(factorRe, factorIm, ((i * (i + 1)) / 2 + k) * BLOCK, re, im, i * BLOCK, k * BLOCK, count)
-    }
-  }
-  for (let at = 0; at < n * BLOCK; at += BLOCK) {
-    for (let f = 0; f < count; f++) {
-      const a = re[at + f]!
-      const b = im[at + f]!
-      const c = pivotRe[at + f]!
-      const d = pivotIm[at + f]!
-      re[at + f] = a * c - b * d
-      im[at + f] = a * d + b * c
-    }
-  }
-  for (let k = n - 2; k >= 0; k--) {
-    for (let i = k + 1; i < n; i++) {
-      eliminate(factorRe, factorIm, ((i * (i + 1)) / 2 + k) * BLOCK, re, im, k * BLOCK, i * BLOCK, count)
-    }
-  }
-}
-
-/** target -= factor · source, frequency by frequency */
-function eliminate(
-  factorRe: Float64Array,
-  factorIm: Float64Array,
-  factor: number,
-  re: Float64Array,
-  im: Float64Array,
-  target: number,
-  source: number,
+function multiply(
+  { re: leftRe, im: leftIm }: ComplexParts,
+  l: number,
+  { re: rightRe, im: rightIm }: ComplexParts,
+  r: number,
+  { re, im }: ComplexParts,
+  at: number,
   count: number,
 ): void {
   for (let f = 0; f < count; f++) {
-    const a = factorRe[factor + f]!
-    const b = factorIm[factor + f]!
-    const c = re[source + f]!
-    const d = im[source + f]!
-    re[target + f]! -= a * c - b * d
-    im[target + f]! -= a * d + b * c
+    const a = leftRe[l + f]!
+    const b = leftIm[l + f]!
+    const c = rightRe[r + f]!
+    const d = rightIm[r + f]!
+    re[at + f] = a * c - b * d
+    im[at + f] = a * d + b * c
   }
 }

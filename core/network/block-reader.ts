@@ -1,0 +1,123 @@
+/* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized for BLOCK by construction */
+import type { AssembledElement } from './assemble.ts'
+import type { SparseRow } from './kinematics.ts'
+import { combineParts, type ComplexParts } from '../numerics/block-combine.ts'
+import { steadyPart, varies, varyingPart, type Law } from './laws.ts'
+import { BLOCK, type ResponseBlock } from './response.ts'
+
+/** A complex vector over a block, parts apart, one curve per direction. */
+export type BlockVector = readonly [ComplexParts, ComplexParts, ComplexParts]
+
+export function blockCurve(length = BLOCK): ComplexParts {
+  return { re: new Float64Array(length), im: new Float64Array(length) }
+}
+export function blockVector(length = BLOCK): BlockVector {
+  return [blockCurve(length), blockCurve(length), blockCurve(length)]
+}
+
+/** target[at + f] = row · displacement, at every frequency of the block. */
+export function readRow(row: SparseRow, block: ResponseBlock, target: ComplexParts, at = 0): void {
+  combineParts(block.motion, row.indices, BLOCK, row.values, target, at, block.count)
+}
+
+/**
+ * Force of an element on its carrying side, fixed axes, written from index `at` on: the sum over its
+ * branches of axis · z(omega) · relative motion. `scratch` is used up.
+ */
+export function readForce(
+  { branches }: AssembledElement,
+  block: ResponseBlock,
+  scratch: ComplexParts,
+  target: BlockVector,
+  at = 0,
+): void {
+  const { count } = block
+  let written = 0
+  for (const { branch, law, row } of branches) {
+    if (branch.motion === 'turn') continue
+    readRow(row, block, scratch)
+    for (let axis = 0; axis < 3; axis++) {
+      const share = branch.axis[axis]!
+      if (share === 0) continue
+      const more = (written & (1 << axis)) !== 0
+      addForce(law, block, share, scratch, target[axis]!, at, more)
+      written |= 1 << axis
+    }
+  }
+  for (let axis = 0; axis < 3; axis++) {
+    if ((written & (1 << axis)) !== 0) continue
+    target[axis]!.re.fill(0, at, at + count)
+    target[axis]!.im.fill(0, at, at + count)
+  }
+}
+
+/** target = share · z(omega) · motion, or added to it where something stands there already. */
+function addForce(
+  law: Law,
+  { count, omega }: ResponseBlock,
+  share: number,
+  { re: motionRe, im: motionIm }: ComplexParts,
+  { re, im }: ComplexParts,
+  at: number,
+  more: boolean,
+): void {
+  const steady = steadyPart(law)
+  const stiffness = share * steady.stiffness
+  const hysteretic = share * steady.hysteretic
+  const viscous = share * steady.viscous
+  const changing = varies(law)
+  for (let f = 0; f < count; f++) {
+    let zRe = stiffness
+    let zIm = hysteretic + omega[f]! * viscous
+    if (changing) {
+      const extra = varyingPart(law, omega[f]!)
+      zRe += share * extra.re
+      zIm += share * extra.im
+    }
+    const a = motionRe[f]!
+    const b = motionIm[f]!
+    re[at + f] = zRe * a - zIm * b + (more ? re[at + f]! : 0)
+    im[at + f] = zRe * b + zIm * a + (more ? im[at + f]! : 0)
+  }
+}
+
+/**
+ * Square of the largest length that the vector Re(F exp(i omega t)) reaches in a cycle:
+ * (|F|² + |F·F|) / 2 with F·F the sum of squares, unconjugated (semi-major axis of its ellipse).
+ */
+export function peakSquared(vector: BlockVector, f: number): number {
+  let size = 0
+  let real = 0
+  let imaginary = 0
+  for (let axis = 0; axis < 3; axis++) {
+    const a = vector[axis]!.re[f]!
+    const b = vector[axis]!.im[f]!
+    size += a * a + b * b
+    real += a * a - b * b
+    imaginary += 2 * a * b
+  }
+  return (size + Math.sqrt(real * real + imaginary * imaginary)) / 2
+}
+
+/** Sum of |F|² over the three directions. */
+export function sizeSquared(vector: BlockVector, f: number): number {
+  let size = 0
+  for (let axis = 0; axis < 3; axis++) {
+    const a = vector[axis]!.re[f]!
+    const b = vector[axis]!.im[f]!
+    size += a * a + b * b
+  }
+  return size
+}
+
+/** target += vector */
+export function addVector(target: BlockVector, vector: BlockVector, count: number): void {
+  for (let axis = 0; axis < 3; axis++) {
+    const to = target[axis]!
+    const from = vector[axis]!
+    for (let f = 0; f < count; f++) {
+      to.re[f]! += from.re[f]!
+      to.im[f]! += from.im[f]!
+    }
+  }
+}
