@@ -1,6 +1,6 @@
 import type { AnnotationOptions } from 'chartjs-plugin-annotation'
 import type { ChartBand, ChartLimit, ChartMark } from './chart-types.ts'
-import type { DrawModel } from './draw-model.ts'
+import type { DrawModel, DrawnAxis } from './draw-model.ts'
 import { placeLabels } from './label-rows.ts'
 import type { Palette } from './palette.ts'
 
@@ -15,20 +15,28 @@ export interface Marking {
   readonly bands: readonly ChartBand[]
 }
 
+export interface PlotSize {
+  readonly width: number
+  readonly height: number
+}
+
+/** Places along a horizontal line for its name, in the order in which they are taken. */
+const PLACES = ['start', 'end', 'center'] as const
+
 /** Marks, limits, forbidden regions and bands as annotations in shown units. */
 export function annotationsOf(
   model: DrawModel,
   marking: Marking,
   palette: Palette,
   hatch: CanvasPattern | string,
-  plotWidth: number,
+  plot: PlotSize,
 ): Record<string, AnnotationOptions> {
   return {
     ...Object.fromEntries(
       marking.bands.map((band) => [`band-${band.id}`, bandOf(band, model, palette, hatch)]),
     ),
-    ...limitsOf(marking.limits, model, palette, hatch, plotWidth),
-    ...marksOf(marking.marks, model, palette, plotWidth),
+    ...limitsOf(marking.limits, model, palette, hatch, plot),
+    ...marksOf(marking.marks, model, palette, plot.width),
   }
 }
 
@@ -53,44 +61,60 @@ function limitsOf(
   model: DrawModel,
   palette: Palette,
   hatch: CanvasPattern | string,
-  plotWidth: number,
+  plot: PlotSize,
 ): Record<string, AnnotationOptions> {
   const made: Record<string, AnnotationOptions> = {}
-  for (const limit of limits) {
+  const places = placeLabels(
+    limits.map((limit) => ({
+      at: share(model.y.shown(limit.y), model.y) * plot.height + (limit.forbidden === 'below' ? 9 : -9),
+      width: FONT_SIZE + 2,
+    })),
+    PLACES.length,
+    [-Infinity, Infinity],
+    1,
+  )
+  for (const [index, limit] of limits.entries()) {
     const y = model.y.shown(limit.y)
     if (!Number.isFinite(y)) continue
     const ends = acrossOf(limit, model)
     const edge = Math.max(model.y.min, Math.min(model.y.max, y))
-    made[`region-${limit.id}`] = {
-      type: 'box',
-      ...ends,
-      yMin: limit.forbidden === 'above' ? edge : model.y.min,
-      yMax: limit.forbidden === 'above' ? model.y.max : edge,
-      backgroundColor: hatch,
-      borderWidth: 0,
-      drawTime: 'beforeDatasetsDraw',
-      z: -1,
+    const plain = limit.forbidden === 'none'
+    if (!plain) {
+      made[`region-${limit.id}`] = {
+        type: 'box',
+        ...ends,
+        yMin: limit.forbidden === 'above' ? edge : model.y.min,
+        yMax: limit.forbidden === 'above' ? model.y.max : edge,
+        backgroundColor: hatch,
+        borderWidth: 0,
+        drawTime: 'beforeDatasetsDraw',
+        z: -1,
+      }
     }
     if (edge !== y) continue
+    const row = places[index]?.row ?? null
+    const across = (share(ends.xMax, model.x) - share(ends.xMin, model.x)) * plot.width
+    const wide = across > limit.label.length * LETTER + 12
     made[`limit-${limit.id}`] = {
       type: 'line',
       ...ends,
       yMin: y,
       yMax: y,
-      borderColor: palette.danger,
-      borderWidth: 1.5,
+      borderColor: plain ? palette.soft : palette.danger,
+      borderWidth: plain ? 1 : 1.5,
+      borderDash: plain ? [6, 3] : [],
       label: {
-        display: true,
+        display: limit.label !== '' && row !== null,
         content: limit.label,
-        position: shareOf(ends, model) * plotWidth > limit.label.length * LETTER + 12 ? 'start' : 'center',
-        color: palette.danger,
+        position: wide ? (PLACES[row ?? 0] ?? 'start') : 'center',
+        color: plain ? palette.soft : palette.danger,
         backgroundColor: 'transparent',
         textStrokeColor: palette.paper,
         textStrokeWidth: 3,
-        font: { size: FONT_SIZE, family: palette.font, weight: 600 },
+        font: { size: FONT_SIZE, family: palette.font, weight: plain ? 400 : 600 },
         padding: { x: 4, y: 1 },
-        xAdjust: 4,
-        yAdjust: limit.forbidden === 'above' ? 9 : -9,
+        xAdjust: wide && row === 1 ? -4 : 4,
+        yAdjust: limit.forbidden === 'below' ? -9 : 9,
       },
     }
   }
@@ -124,7 +148,7 @@ function marksOf(
     .map((mark) => ({ mark, x: model.x.shown(mark.x) }))
     .filter(({ x }) => x >= model.x.min && x <= model.x.max)
     .toSorted((a, b) => Number(b.mark.role === 'running') - Number(a.mark.role === 'running'))
-  const pixel = (x: number) => share(x, model) * plotWidth
+  const pixel = (x: number) => share(x, model.x) * plotWidth
   const placed = placeLabels(
     inside.map(({ mark, x }) => ({ at: pixel(x), width: mark.label.length * LETTER + 8 })),
     labelRows(marks),
@@ -163,12 +187,6 @@ function marksOf(
   )
 }
 
-function shareOf(ends: { readonly xMin: number; readonly xMax: number }, model: DrawModel): number {
-  return share(ends.xMax, model) - share(ends.xMin, model)
-}
-
-function share(x: number, model: DrawModel): number {
-  const { min, max, kind } = model.x
-  if (kind === 'log') return Math.log(x / min) / Math.log(max / min)
-  return (x - min) / (max - min)
+function share(at: number, { min, max, kind }: DrawnAxis): number {
+  return kind === 'log' ? Math.log(at / min) / Math.log(max / min) : (at - min) / (max - min)
 }

@@ -54,7 +54,8 @@ export function createChartHost(canvas: HTMLCanvasElement, callbacks: Callbacks)
     },
   }
 
-  const plotWidth = () => chart?.chartArea?.width ?? canvas.clientWidth - 60
+  const plotSize = () =>
+    chart?.chartArea ?? { width: canvas.clientWidth - 60, height: canvas.clientHeight - 60 }
 
   function create(model: DrawModel) {
     return new Chart<'line', DrawnPoint[]>(canvas, {
@@ -87,7 +88,7 @@ export function createChartHost(canvas: HTMLCanvasElement, callbacks: Callbacks)
     setRange(options, 'x', model)
     setRange(options, 'y', model)
     const annotation = options.plugins?.annotation
-    if (annotation) annotation.annotations = annotationsOf(model, marking, palette, hatch, plotWidth())
+    if (annotation) annotation.annotations = annotationsOf(model, marking, palette, hatch, plotSize())
     drawn.update('none')
   }
 

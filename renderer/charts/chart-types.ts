@@ -44,12 +44,12 @@ export interface ChartMark {
   readonly role: 'running' | 'crossing'
 }
 
-/** A horizontal limit at `y` [SI] with the hatched side that is not allowed. */
+/** A horizontal line at `y` [SI] with the hatched side that is not allowed; 'none' for a plain boundary. */
 export interface ChartLimit {
   readonly id: string
   readonly y: number
   readonly label: string
-  readonly forbidden: 'above' | 'below'
+  readonly forbidden: 'above' | 'below' | 'none'
   /** speeds for which it holds [SI]; absent: all */
   readonly from?: number
   readonly to?: number

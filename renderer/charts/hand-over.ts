@@ -1,19 +1,7 @@
+import { download } from '../state/project-file.ts'
+
 /** What became of a copy: on the clipboard, or in a file where the clipboard is closed to pages. */
 export type HandOver = 'copied' | 'saved'
-
-/** Saves bytes under a name through the browser's own download. */
-export function saveFile(name: string, content: Blob): void {
-  const address = URL.createObjectURL(content)
-  const link = document.createElement('a')
-  link.href = address
-  link.download = name
-  link.hidden = true
-  document.body.append(link)
-  link.click()
-  link.remove()
-  // the download has taken its own hold of the bytes by the next minute
-  setTimeout(() => URL.revokeObjectURL(address), 60_000)
-}
 
 /** A picture to the clipboard; where that is refused, as a file. */
 export async function handOverPicture(picture: Promise<Blob>, name: string): Promise<HandOver> {
@@ -21,7 +9,7 @@ export async function handOverPicture(picture: Promise<Blob>, name: string): Pro
     await navigator.clipboard.write([new ClipboardItem({ 'image/png': picture })])
     return 'copied'
   } catch {
-    saveFile(`${name}.png`, await picture)
+    download(`${name}.png`, await picture)
     return 'saved'
   }
 }
@@ -32,7 +20,7 @@ export async function handOverText(text: string, name: string): Promise<HandOver
     await navigator.clipboard.writeText(text)
     return 'copied'
   } catch {
-    saveFile(`${name}.tsv`, new Blob([text], { type: 'text/tab-separated-values' }))
+    download(`${name}.tsv`, new Blob([text], { type: 'text/tab-separated-values' }))
     return 'saved'
   }
 }
