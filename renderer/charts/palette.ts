@@ -23,8 +23,8 @@ export function readPalette(element: HTMLElement): Palette {
   const probe = document.createElement('span')
   probe.hidden = true
   element.append(probe)
-  const colour = (token: string) => {
-    probe.style.color = `var(${token})`
+  const colour = (token: string, share = 100) => {
+    probe.style.color = `color-mix(in srgb, var(${token}) ${share}%, transparent)`
     return getComputedStyle(probe).color
   }
   const palette: Palette = {
@@ -35,12 +35,12 @@ export function readPalette(element: HTMLElement): Palette {
     grid: colour('--grid-line'),
     rule: colour('--rule'),
     accent: colour('--accent-speed'),
-    accentWash: colour('--accent-speed-wash'),
+    accentWash: colour('--accent-speed-wash', 55),
     danger: colour('--danger'),
     hatch: colour('--hatch-danger-line'),
     select: colour('--select'),
     selectWash: colour('--select-wash'),
-    curves: CURVES.map(colour),
+    curves: CURVES.map((token) => colour(token)),
     font: getComputedStyle(element).fontFamily,
   }
   probe.remove()
