@@ -58,7 +58,7 @@ export function buildReport(project: Project, evaluation: Evaluation, options: R
   const absorbers = absorberSection(project, evaluation, writer)
   return {
     title: project.job.name || 'Unnamed project',
-    titleBlock: titleBlock(project, madeAt, checksum),
+    titleBlock: titleBlock(project, evaluation, madeAt, checksum),
     madeAt,
     checksum,
     units: project.units,

@@ -2,15 +2,23 @@ import type { Project } from '../../project/project.ts'
 import type { Evaluation } from '../../results.ts'
 import type { Block, Fact, ReportSection } from '../report.ts'
 import { NOT_KNOWN_WORDS, type Writer } from '../writer.ts'
+import { verdictCount } from './verdicts.ts'
 
 /** Lines of the title block. @param madeAt as given by the caller, or null */
-export function titleBlock(project: Project, madeAt: string | null, checksum: string): readonly Fact[] {
+export function titleBlock(
+  project: Project,
+  evaluation: Evaluation,
+  madeAt: string | null,
+  checksum: string,
+): readonly Fact[] {
   const { job } = project
+  const { verdicts } = evaluation
   return [
     { label: 'Project', value: job.name || 'Unnamed project' },
     { label: 'Job or order number', value: job.reference },
     { label: 'Site', value: job.site },
     { label: 'Prepared by', value: job.preparedBy },
+    { label: 'Requirements', value: verdicts.length === 0 ? 'none judged' : verdictCount(verdicts) },
     { label: 'Made', value: madeAt ?? '' },
     { label: 'Checksum of the inputs', value: `${checksum.slice(0, 16)}…` },
   ].filter((fact) => fact.value !== '')

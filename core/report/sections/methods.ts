@@ -161,7 +161,7 @@ function absorberNotes(project: Project): readonly MethodNote[] {
   if (by('minimax')) {
     notes.push({
       what: 'Least worst peak',
-      how: 'Frequency and damping for which the highest peak of the damped host is least, from the conditions of the optimum; no closed form exists.',
+      how: 'Frequency and damping for which the highest peak of the damped host is least, from the conditions of the optimum; a damped host has no closed form.',
       source: 'Objectives after G. B. Warburton, Earthquake Engineering and Structural Dynamics 10, 1982',
     })
   }

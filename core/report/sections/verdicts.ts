@@ -30,13 +30,22 @@ export function verdictSection(project: Project, evaluation: Evaluation, writer:
       ),
     })
     const notes = verdicts.filter((verdict) => verdict.source !== '' || verdict.advice !== '')
+    const advised = notes.some((verdict) => verdict.advice !== '')
     if (notes.length > 0) {
       blocks.push(
         writeTable(
           {
             caption: 'Where the limits come from, and what to look at',
-            columns: [textColumn('Requirement'), textColumn('Source of the limit'), textColumn('Remark')],
-            rows: notes.map((verdict) => [verdict.title, verdict.source || NOT_KNOWN_WORDS, verdict.advice]),
+            columns: [
+              textColumn('Requirement'),
+              textColumn('Source of the limit'),
+              ...(advised ? [textColumn('Remark')] : []),
+            ],
+            rows: notes.map((verdict) => [
+              verdict.title,
+              verdict.source || NOT_KNOWN_WORDS,
+              ...(advised ? [verdict.advice] : []),
+            ]),
           },
           writer,
         ),
@@ -63,16 +72,19 @@ function verdictRow(verdict: Verdict, writer: Writer): readonly Cell[] {
   ]
 }
 
+/** Such as '4 met, 1 failed, 1 not known'. */
+export function verdictCount(verdicts: readonly Verdict[]): string {
+  const count = (status: Verdict['status']) => verdicts.filter((verdict) => verdict.status === status).length
+  const near = count('near') === 0 ? '' : ` (${count('near')} of them near the limit)`
+  return `${count('pass') + count('near')} met${near}, ${count('fail')} failed, ${count('unknown')} not known`
+}
+
 function summary(verdicts: readonly Verdict[], switchedOff: number): string {
   const off =
     switchedOff === 0
       ? ''
       : ` ${switchedOff} ${switchedOff === 1 ? 'requirement is' : 'requirements are'} switched off and not judged.`
   if (verdicts.length === 0) return `No requirement is judged: nothing has been asked of this machine.${off}`
-  const count = (status: Verdict['status']) => verdicts.filter((verdict) => verdict.status === status).length
-  const met = count('pass') + count('near')
-  const near = count('near') === 0 ? '' : ` (${count('near')} of them near the limit)`
-  const parts = [`${met} met${near}`, `${count('fail')} failed`, `${count('unknown')} not known`]
   const total = `${verdicts.length} ${verdicts.length === 1 ? 'requirement' : 'requirements'} judged`
-  return `${total}: ${parts.join(', ')}. What could not be computed counts as not known, never as met.${off}`
+  return `${total}: ${verdictCount(verdicts)}. What could not be computed counts as not known, never as met.${off}`
 }
