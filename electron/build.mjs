@@ -88,7 +88,6 @@ async function buildShell(folder) {
     loopback: 'electron/loopback/host.ts',
     'report-worker': 'electron/api/report-worker.ts',
   })
-  if (!existsSync(join(ROOT, 'electron/preload.ts'))) return
   // The sandboxed preload gets the endpoints' names as data: the table itself would bring zod along.
   await bundle(
     folder,
