@@ -1,7 +1,8 @@
 import { designAbsorber, type AbsorberContext } from './absorber/design.ts'
-import { responseAtSpeeds } from './excitation/at-speeds.ts'
+import { isBounded, responseAtSpeeds } from './excitation/at-speeds.ts'
 import { describeSource } from './excitation/describe.ts'
 import { groupByOrder, sourceLoad, type SourceLoad } from './excitation/order-loads.ts'
+import type { Observed } from './excitation/observed.ts'
 import { sweepResponse } from './excitation/sweep.ts'
 import { install, type Installation } from './mounts/installation.ts'
 import { MACHINE, type PlacedAbsorber } from './mounts/machine-network.ts'
@@ -9,7 +10,14 @@ import { chartRange, sweepSpeeds } from './mounts/speeds.ts'
 import { pointReceptance } from './network/receptance.ts'
 import { summariseMass } from './project/mass.ts'
 import type { Project } from './project/project.ts'
-import type { AbsorberResult, Evaluation, MassSummary, Problem, ResponseResult } from './results.ts'
+import type {
+  AbsorberResult,
+  Evaluation,
+  MassSummary,
+  Problem,
+  ResponseResult,
+  SpeedResponse,
+} from './results.ts'
 import { judge, type Computed } from './verdict/judge.ts'
 import { adviseLevers } from './verdict/levers.ts'
 
@@ -184,16 +192,42 @@ function respondTo(
   if (range === null) return null
   const orders = groupByOrder(loads)
   const speeds = sweepSpeeds(range, modes, sweepPoints)
-  const { runningSpeed, furtherSpeeds } = project.machine.duty
-  const reported = [...(runningSpeed === null ? [] : [runningSpeed]), ...furtherSpeeds]
+  const { runningSpeed } = project.machine.duty
   const without = full === null ? null : (bare?.observed ?? null)
+  const runningWithout =
+    without === null || runningSpeed === null ? null : responseAtSpeeds(without, orders, [runningSpeed])[0]
   return {
-    atSpeeds: responseAtSpeeds(observed, orders, reported),
+    atSpeeds: reportedSpeeds(project, observed, orders, problems),
     sweep: sweepResponse(observed, orders, speeds),
     sweepWithoutAbsorbers: without === null ? null : sweepResponse(without, orders, speeds),
-    runningWithoutAbsorbers:
-      without === null || runningSpeed === null
-        ? null
-        : (responseAtSpeeds(without, orders, [runningSpeed])[0] ?? null),
+    runningWithoutAbsorbers: runningWithout && isBounded(runningWithout) ? runningWithout : null,
   }
+}
+
+/**
+ * Full response at the running speed and the further speeds. Where a mode without damping is met
+ * exactly there is none: that speed is left out and said; without the running speed, all are.
+ */
+function reportedSpeeds(
+  project: Project,
+  observed: Observed,
+  orders: ReturnType<typeof groupByOrder>,
+  problems: Problem[],
+): readonly SpeedResponse[] {
+  const { runningSpeed, furtherSpeeds } = project.machine.duty
+  const running = runningSpeed === null ? [] : [runningSpeed]
+  const all = responseAtSpeeds(observed, orders, [...running, ...furtherSpeeds])
+  const bounded = all.map(isBounded)
+  bounded.forEach((fine, index) => {
+    if (fine) return
+    const further = index - running.length
+    problems.push({
+      field: further < 0 ? 'machine.duty.runningSpeed' : `machine.duty.furtherSpeeds[${further}]`,
+      message:
+        'At this speed the excitation meets a natural frequency without damping exactly: the response has no bound. Give the mounts damping.',
+      kind: 'caution',
+    })
+  })
+  if (running.length > 0 && bounded[0] === false) return []
+  return all.filter((_, index) => bounded[index])
 }

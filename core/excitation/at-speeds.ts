@@ -1,4 +1,5 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays of one length by construction */
+import { isUnbounded } from '../numerics/block-symmetric.ts'
 import { BLOCK, respond } from '../network/response.ts'
 import type { Complex, ComplexVec3, ComplexVec6, OrderResponse, SpeedResponse } from '../results.ts'
 import type { Vec3 } from '../project/fields.ts'
@@ -23,6 +24,18 @@ interface Detail {
   readonly supportSize: number
   readonly excitation: number
   readonly mounts: readonly number[]
+}
+
+/** Whether every amplitude has a bound; none has at a resonance without damping. */
+export function isBounded(response: SpeedResponse): boolean {
+  const overall = [
+    response.supportForce,
+    ...response.mountForces,
+    ...response.pointVelocity.flat(),
+    ...response.strokes,
+  ]
+  const motion = response.orders.flatMap(({ body }) => body.flatMap(({ re, im }) => [re, im]))
+  return ![...overall, ...motion].some(isUnbounded)
 }
 
 /**

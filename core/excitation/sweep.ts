@@ -1,5 +1,6 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays of the sweep's length by construction */
 import { respond } from '../network/response.ts'
+import { isUnbounded } from '../numerics/block-symmetric.ts'
 import type { Sweep } from '../results.ts'
 import {
   addVector,
@@ -32,13 +33,29 @@ export function sweepResponse(observed: Observed, orders: Orders, speed: Float64
     strokes: observed.absorbers.map(make),
   }
   for (const { order, loads } of orders) addOrder(observed, order, loads, speed, sums)
-  return {
+  return withoutUnbounded({
     speed,
     forceRatio: forceRatio(sums.supportSize, sums.excitation),
     supportForce: sums.support.map(Math.sqrt),
     mountForces: sums.mounts.map((curve) => curve.map(Math.sqrt)),
     pointVelocity: sums.points.map(([x, y, z]) => [x.map(rms), y.map(rms), z.map(rms)] as const),
     strokes: sums.strokes,
+  })
+}
+
+/** At a resonance without damping there is no value, and so no point on the curve. */
+function withoutUnbounded(sweep: Sweep): Sweep {
+  const curves = [sweep.supportForce, ...sweep.mountForces, ...sweep.pointVelocity.flat(), ...sweep.strokes]
+  const bounded = sweep.speed.map((_, f) => (curves.some((curve) => isUnbounded(curve[f]!)) ? 0 : 1))
+  if (bounded.every((one) => one === 1)) return sweep
+  const keep = (curve: Float64Array) => curve.filter((_, f) => bounded[f] === 1)
+  return {
+    speed: keep(sweep.speed),
+    forceRatio: sweep.forceRatio === null ? null : keep(sweep.forceRatio),
+    supportForce: keep(sweep.supportForce),
+    mountForces: sweep.mountForces.map(keep),
+    pointVelocity: sweep.pointVelocity.map(([x, y, z]) => [keep(x), keep(y), keep(z)] as const),
+    strokes: sweep.strokes.map(keep),
   }
 }
 

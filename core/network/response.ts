@@ -63,8 +63,8 @@ export interface ResponseSolver {
 
 export function responseSolver(system: System, modes: UndampedModes): ResponseSolver {
   const n = modes.count
-  const viscous = modalMatrix(system.viscous, modes)
-  const hysteretic = modalMatrix(system.hysteretic, modes)
+  const viscous = withoutRounding(modalMatrix(system.viscous, modes), n)
+  const hysteretic = withoutRounding(modalMatrix(system.hysteretic, modes), n)
   return {
     freedoms: n,
     omegaSquared: modes.omegaSquared,
@@ -79,6 +79,23 @@ export function responseSolver(system: System, modes: UndampedModes): ResponseSo
     })),
     shapes: modes.shapes,
   }
+}
+
+/** Parts of a modal quantity below this share of its largest are rounding. */
+const ROUNDING = 1e-13
+
+/**
+ * A modal damping matrix in which a mode that no damper touches has none at all: the remains of
+ * rounding would couple it, and at its resonance they would be all there is.
+ */
+function withoutRounding(matrix: Float64Array, n: number): Float64Array {
+  const own = Float64Array.from({ length: n }, (_, r) => matrix[r * n + r]!)
+  const least = ROUNDING * Math.max(...own)
+  return matrix.map((value, at) => {
+    const [a, b] = [own[Math.floor(at / n)]!, own[at % n]!]
+    if (a <= least || b <= least) return 0
+    return Math.abs(value) <= ROUNDING * Math.sqrt(a * b) ? 0 : value
+  })
 }
 
 /**
@@ -139,9 +156,11 @@ function fillMatrix(solver: ResponseSolver, matrix: BlockMatrix, omega: Float64A
       const inertia = r === s ? 1 : 0
       const viscous = solver.viscous[r * n + s]!
       const hysteretic = solver.hysteretic[r * n + s]!
+      const least = ROUNDING * Math.abs(stiffness)
       for (let f = 0; f < count; f++) {
         const w = omega[f]!
-        re[at + f] = stiffness - inertia * w * w
+        const rest = stiffness - inertia * w * w
+        re[at + f] = Math.abs(rest) <= least ? 0 : rest
         im[at + f] = hysteretic + w * viscous
       }
     }
@@ -163,12 +182,16 @@ function fillMatrix(solver: ResponseSolver, matrix: BlockMatrix, omega: Float64A
 
 function toModal(solver: ResponseSolver, load: LoadCase): LoadCase {
   const n = solver.freedoms
-  const project = (vector: Float64Array) =>
-    Float64Array.from({ length: n }, (_, r) => {
+  // a mode that the load does not drive gets exactly nothing, so that its resonance stays silent
+  const project = (vector: Float64Array) => {
+    const modal = Float64Array.from({ length: n }, (_, r) => {
       let sum = 0
       for (let i = 0; i < n; i++) sum += solver.shapes[r * n + i]! * vector[i]!
       return sum
     })
+    const least = ROUNDING * modal.reduce((largest, value) => Math.max(largest, Math.abs(value)), 0)
+    return modal.map((value) => (Math.abs(value) <= least ? 0 : value))
+  }
   return {
     constantRe: project(load.constantRe),
     constantIm: project(load.constantIm),

@@ -14,6 +14,18 @@ import { subtractProducts, type ComplexParts } from './block-combine.ts'
  */
 export const BLOCK = 64
 
+/**
+ * Stands for the reciprocal of a pivot that is exactly zero (a resonance without damping): nothing
+ * times it stays nothing, anything else becomes so large that `isUnbounded` tells it.
+ */
+const RECIPROCAL_OF_ZERO = 1e200
+const UNBOUNDED = 1e100
+
+/** Whether a computed value only says that there is no bound, or is no number at all. */
+export function isUnbounded(value: number): boolean {
+  return !(Math.abs(value) < UNBOUNDED)
+}
+
 export interface BlockMatrix {
   readonly size: number
   /** packed lower triangle: entry (i, j <= i) of frequency f at `entryAt(i, j) + f` */
@@ -99,8 +111,8 @@ function invert(
     const a = re[at + f]!
     const b = im[at + f]!
     const square = a * a + b * b
-    toRe[to + f] = a / square
-    toIm[to + f] = -b / square
+    toRe[to + f] = square > 0 ? a / square : RECIPROCAL_OF_ZERO
+    toIm[to + f] = square > 0 ? -b / square : 0
   }
 }
 
