@@ -31,10 +31,14 @@ const host = z.discriminatedUnion('kind', [
 
 const objective = z
   .strictObject({
-    excitation: z.enum(['force', 'unbalance', 'supportAcceleration', 'supportDisplacement']).default('force'),
+    excitation: z
+      .enum(['force', 'unbalance', 'supportAcceleration', 'supportDisplacement'])
+      .default('force')
+      .meta({ description: 'what shakes the host' }),
     response: z
       .enum(['displacement', 'velocity', 'acceleration', 'relativeDisplacement', 'transmittedForce'])
-      .default('displacement'),
+      .default('displacement')
+      .meta({ description: 'what shall be least' }),
   })
   .prefault({})
   .meta({ description: 'which response of the host to which excitation shall be least at its worst' })
@@ -99,9 +103,11 @@ export const absorberSchema = z.strictObject({
   id: identifier,
   name: label('name of the absorber'),
   enabled: z.boolean().default(true).meta({ description: 'false: kept, but left out of the response' }),
-  host,
-  size: size.default({ by: 'ratio', ratio: 0.05 }),
-  tuning: tuning.prefault({ by: 'minimax' }),
+  host: host.meta({ description: 'what carries the absorber' }),
+  size: size
+    .default({ by: 'ratio', ratio: 0.05 })
+    .meta({ description: 'mass of the absorber, typed or as a share of its host' }),
+  tuning: tuning.prefault({ by: 'minimax' }).meta({ description: 'how spring and damper are found' }),
   strokeLimit: optionalQuantity(
     'deflection',
     'largest travel allowed between absorber mass and machine, zero to peak',

@@ -31,7 +31,11 @@ export function quantity(dimension: Dimension, meaning: string, limits: Limits =
 
 /** A quantity that a draft may lack: null says that nobody has given it yet. */
 export function optionalQuantity(dimension: Dimension, meaning: string, limits: Limits = {}) {
-  return quantity(dimension, meaning, limits).nullable().default(null)
+  const unit = DIMENSIONS[dimension].baseLabel
+  return quantity(dimension, meaning, limits)
+    .nullable()
+    .default(null)
+    .meta({ description: meaning, unit: unit === '' ? 'pure number' : unit })
 }
 
 export function vector(dimension: Dimension, meaning: string, limits: Limits = {}) {

@@ -23,7 +23,9 @@ const part = z.discriminatedUnion('shape', [
     name: label('what this part is'),
     mass: quantity('mass', 'mass of the part', { above: 0 }),
     centre: vector('length', 'centre of the part in machine axes'),
-    size: z.tuple([size('length along x'), size('length along y'), size('length along z')]),
+    size: z
+      .tuple([size('length along x'), size('length along y'), size('length along z')])
+      .meta({ description: 'outer lengths of the box' }),
   }),
   z.strictObject({
     shape: z.literal('cylinder'),
@@ -67,6 +69,7 @@ const shaft = z
       .meta({ description: 'rotation about the axis by the right-hand rule, or against it' }),
   })
   .prefault({})
+  .meta({ description: 'where the shaft lies and how it turns' })
 
 const duty = z
   .strictObject({
@@ -93,6 +96,7 @@ const duty = z
       }),
   })
   .prefault({})
+  .meta({ description: 'speeds at which the machine runs' })
 
 const point = z.strictObject({
   id: identifier,
@@ -113,6 +117,7 @@ export const machineSchema = z
       .meta({ description: 'points on the machine whose motion is judged or reported' }),
   })
   .prefault({})
+  .meta({ description: 'the machine as one rigid body with a shaft' })
 
 export type Machine = z.infer<typeof machineSchema>
 export type MassProperties = Machine['massProperties']

@@ -35,7 +35,7 @@ export const mountTypeSchema = z.strictObject({
     .max(1e9)
     .nullable()
     .default(null)
-    .meta({ description: "price of one, in the catalogue's currency" }),
+    .meta({ description: 'price of one', unit: "the catalogue's currency" }),
   note: label('where the figures come from'),
 })
 
@@ -57,10 +57,19 @@ const placedMount = z.strictObject({
 
 export const mountingSchema = z
   .strictObject({
-    types: z.array(mountTypeSchema).max(100).default([]),
-    placed: z.array(placedMount).max(200).default([]),
+    types: z
+      .array(mountTypeSchema)
+      .max(100)
+      .default([])
+      .meta({ description: 'kinds of mount that this project uses' }),
+    placed: z
+      .array(placedMount)
+      .max(200)
+      .default([])
+      .meta({ description: 'every single mount under the machine' }),
   })
   .prefault({})
+  .meta({ description: 'the mounts, their kinds and their places' })
 
 export type MountType = z.infer<typeof mountTypeSchema>
 export type PlacedMount = z.infer<typeof placedMount>

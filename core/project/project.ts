@@ -25,6 +25,7 @@ const job = z
       .meta({ description: 'words to find the project by' }),
   })
   .prefault({})
+  .meta({ description: 'what the project is called and whom it serves' })
 
 const analysis = z
   .strictObject({
@@ -37,9 +38,10 @@ const analysis = z
       .positive()
       .max(100)
       .default(9.80665)
-      .meta({ description: 'acceleration of gravity [m/s²]' }),
+      .meta({ description: 'acceleration of gravity [m/s²]', unit: 'm/s²' }),
   })
   .prefault({})
+  .meta({ description: 'how the results are computed' })
 
 /** The project as data: what a file, a row of the library, the interface and the batch door share. */
 export const projectSchema = z
@@ -47,13 +49,10 @@ export const projectSchema = z
     format: z.literal(PROJECT_FORMAT),
     version: z.literal(PROJECT_VERSION),
     job,
-    units: z
-      .enum(UNIT_SYSTEMS)
-      .default('SI')
-      .meta({
-        description:
-          'units in which a person reads the project; values in the file are SI unless they carry a unit',
-      }),
+    units: z.enum(UNIT_SYSTEMS).default('SI').meta({
+      description:
+        'units in which a person reads the project; values in the file are SI unless they carry a unit',
+    }),
     machine: machineSchema,
     sources: z.array(sourceSchema).max(100).default([]).meta({ description: 'exciting forces' }),
     footing: z
@@ -61,8 +60,16 @@ export const projectSchema = z
       .default({ kind: 'rigid' })
       .meta({ description: 'what the mounts stand on' }),
     mounting: mountingSchema,
-    absorbers: z.array(absorberSchema).max(10).default([]),
-    requirements: z.array(requirementSchema).max(100).default([]),
+    absorbers: z
+      .array(absorberSchema)
+      .max(10)
+      .default([])
+      .meta({ description: 'tuned masses on the machine, or on a host of one freedom' }),
+    requirements: z
+      .array(requirementSchema)
+      .max(100)
+      .default([])
+      .meta({ description: 'limits that the machine on its mounts must keep' }),
     analysis,
   })
   .meta({

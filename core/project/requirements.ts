@@ -6,12 +6,9 @@ const common = {
   enabled: z.boolean().default(true).meta({ description: 'false: kept, but not judged' }),
   source: label('where the limit comes from: a contract, a standard, a maker'),
 }
-const speeds = z
-  .enum(['running', 'operating', 'chart'])
-  .default('running')
-  .meta({
-    description: 'judged at the running speed, over the operating range, or over every speed of the chart',
-  })
+const speeds = z.enum(['running', 'operating', 'chart']).default('running').meta({
+  description: 'judged at the running speed, over the operating range, or over every speed of the chart',
+})
 
 export const SEVERITY_SCALES = ['iso10816-1', 'iso20816-3', 'iso14694', 'own'] as const
 
@@ -37,7 +34,10 @@ export const requirementSchema = z.discriminatedUnion('kind', [
     kind: z.literal('vibrationVelocity'),
     speeds,
     point: identifier.nullable().default(null).meta({ description: 'id of the point on the machine' }),
-    direction: z.enum(['worst', 'x', 'y', 'z']).default('worst'),
+    direction: z
+      .enum(['worst', 'x', 'y', 'z'])
+      .default('worst')
+      .meta({ description: 'direction that is judged; worst: the largest of the three' }),
     scale: z
       .enum(SEVERITY_SCALES)
       .default('own')
@@ -52,7 +52,8 @@ export const requirementSchema = z.discriminatedUnion('kind', [
     orders: z
       .array(quantity('ratio', 'order', { above: 0, max: 1000 }))
       .max(50)
-      .default([1]),
+      .default([1])
+      .meta({ description: 'orders that the natural frequencies must keep away from' }),
     speeds,
     limit: optionalQuantity(
       'share',

@@ -4,6 +4,7 @@ import { direction, identifier, label, optionalQuantity, quantity, vector } from
 const place = vector('length', 'where it acts, from the datum; empty: the point on the shaft')
   .nullable()
   .default(null)
+  .meta({ description: 'where it acts, from the datum; empty: the point on the shaft', unit: 'm' })
 const phase = quantity('angle', 'phase lead', { min: -1000, max: 1000 }).default(0)
 const order = quantity('ratio', 'order: times the shaft speed, fractions allowed', {
   above: 0,
@@ -45,7 +46,7 @@ const unbalanceSource = z.strictObject({
   name: label('what is out of balance'),
   enabled,
   position: place,
-  amount: unbalanceAmount,
+  amount: unbalanceAmount.meta({ description: 'how much, in one of three ways to say it' }),
   phase,
 })
 
@@ -68,7 +69,7 @@ const harmonicSource = z.strictObject({
   name: label('what pushes'),
   enabled,
   position: place,
-  load,
+  load: load.meta({ description: 'force or moment' }),
   order,
   dependence: z
     .discriminatedUnion('on', [
@@ -82,7 +83,8 @@ const harmonicSource = z.strictObject({
         ),
       }),
     ])
-    .default({ on: 'constant' }),
+    .default({ on: 'constant' })
+    .meta({ description: 'how the amplitude goes with the speed' }),
   phase,
 })
 
