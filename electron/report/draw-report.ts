@@ -122,7 +122,6 @@ const LAYOUTS: Record<string, CustomTableLayout> = {
 }
 
 function titleBlock(report: Report): Content {
-  const facts = report.titleBlock.filter((fact) => fact.label !== 'Project')
   return {
     table: {
       widths: ['*', 250],
@@ -138,7 +137,10 @@ function titleBlock(report: Report): Content {
           {
             table: {
               widths: [92, '*'],
-              body: facts.map(({ label, value }) => [{ text: label, color: INK_SOFT }, { text: value }]),
+              body: report.titleBlock.map(({ label, value }) => [
+                { text: label, color: INK_SOFT },
+                { text: value },
+              ]),
             },
             layout: 'plain',
             fontSize: 8,

@@ -14,7 +14,6 @@ export function titleBlock(
   const { job } = project
   const { verdicts } = evaluation
   return [
-    { label: 'Project', value: job.name || 'Unnamed project' },
     { label: 'Job or order number', value: job.reference },
     { label: 'Site', value: job.site },
     { label: 'Prepared by', value: job.preparedBy },

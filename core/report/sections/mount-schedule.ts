@@ -78,7 +78,7 @@ export function mountScheduleSection(
       writeTable(order, writer),
       {
         kind: 'paragraph',
-        text: 'Places are those of the top of each mount, from the datum of the machine. Loads are at rest, the weight alone. The dynamic force is the peak over all orders.',
+        text: 'Places are those of the top of each mount, from the datum of the machine. Loads are those at rest, under the weight of the machine and of the absorbers in place. The dynamic force is the peak over all orders.',
       },
     ],
   }
