@@ -27,8 +27,15 @@ export interface EvaluateOptions {
 }
 
 const SWEEP_POINTS = 2000
-/** Trials of levers need the judged values only, and those stand at resonances and given speeds. */
-const TRIAL_POINTS = 600
+
+/** How much of a project is computed. */
+interface Scope {
+  readonly sweepPoints: number
+  /** false: the judged values only, without comparison and further speeds */
+  readonly whole: boolean
+}
+/** Trials of levers need what is judged, and that stands at resonances and given speeds. */
+const TRIAL: Scope = { sweepPoints: 400, whole: false }
 
 /**
  * Everything that can be known about a project: the one door for interface, batch and tests.
@@ -36,14 +43,14 @@ const TRIAL_POINTS = 600
  * `problems` says why, at the field.
  */
 export function evaluate(project: Project, options: EvaluateOptions = {}): Evaluation {
-  const computed = compute(project, options.sweepPoints ?? SWEEP_POINTS)
+  const computed = compute(project, { sweepPoints: options.sweepPoints ?? SWEEP_POINTS, whole: true })
   const verdicts = adviseLevers(project, judge(project, computed), computed.modes, (changed) =>
-    judge(changed, compute(changed, TRIAL_POINTS)),
+    judge(changed, compute(changed, TRIAL)),
   )
   return { ...computed, verdicts }
 }
 
-function compute(project: Project, sweepPoints: number): Computed {
+function compute(project: Project, scope: Scope): Computed {
   const { summary, problems: massProblems } = summariseMass(project.machine.massProperties)
   const problems: Problem[] = [...massProblems, ...dutyProblems(project)]
   const orders = ordersOf(project)
@@ -55,7 +62,7 @@ function compute(project: Project, sweepPoints: number): Computed {
     summary === null || placed.length === 0 || bare === null || bare.modes === null
       ? null
       : install(project, summary, placed, orders)
-  const response = respondTo(project, summary, bare, full, sweepPoints, problems)
+  const response = respondTo(project, summary, bare, full, scope, problems)
   return {
     problems,
     massSummary: summary,
@@ -181,7 +188,7 @@ function respondTo(
   summary: MassSummary | null,
   bare: Installation | null,
   full: Installation | null,
-  sweepPoints: number,
+  scope: Scope,
   problems: Problem[],
 ): ResponseResult | null {
   const loads = knownLoads(project, summary, problems)
@@ -191,13 +198,13 @@ function respondTo(
   const range = chartRange(project, modes)
   if (range === null) return null
   const orders = groupByOrder(loads)
-  const speeds = sweepSpeeds(range, modes, sweepPoints)
+  const speeds = sweepSpeeds(range, modes, scope.sweepPoints)
   const { runningSpeed } = project.machine.duty
-  const without = full === null ? null : (bare?.observed ?? null)
+  const without = full === null || !scope.whole ? null : (bare?.observed ?? null)
   const runningWithout =
     without === null || runningSpeed === null ? null : responseAtSpeeds(without, orders, [runningSpeed])[0]
   return {
-    atSpeeds: reportedSpeeds(project, observed, orders, problems),
+    atSpeeds: reportedSpeeds(project, observed, orders, scope, problems),
     sweep: sweepResponse(observed, orders, speeds),
     sweepWithoutAbsorbers: without === null ? null : sweepResponse(without, orders, speeds),
     runningWithoutAbsorbers: runningWithout && isBounded(runningWithout) ? runningWithout : null,
@@ -212,9 +219,11 @@ function reportedSpeeds(
   project: Project,
   observed: Observed,
   orders: ReturnType<typeof groupByOrder>,
+  scope: Scope,
   problems: Problem[],
 ): readonly SpeedResponse[] {
-  const { runningSpeed, furtherSpeeds } = project.machine.duty
+  const { runningSpeed } = project.machine.duty
+  const furtherSpeeds = scope.whole ? project.machine.duty.furtherSpeeds : []
   const running = runningSpeed === null ? [] : [runningSpeed]
   const all = responseAtSpeeds(observed, orders, [...running, ...furtherSpeeds])
   const bounded = all.map(isBounded)

@@ -4,12 +4,12 @@ import { BLOCK, respond } from '../network/response.ts'
 import type { Complex, ComplexVec3, ComplexVec6, OrderResponse, SpeedResponse } from '../results.ts'
 import type { Vec3 } from '../project/fields.ts'
 import {
+  addPeakSquared,
+  addSizeSquared,
   blockCurve,
   blockVector,
-  peakSquared,
   readForce,
   readRow,
-  sizeSquared,
   type BlockVector,
 } from '../network/block-reader.ts'
 import { orderLoadCase, type Observed } from './observed.ts'
@@ -88,6 +88,11 @@ function detailOfOrder(
       re: block.motion.re[freedom * BLOCK + f]!,
       im: block.motion.im[freedom * BLOCK + f]!,
     })
+    const peaks = forces.map((force) => {
+      const peak = new Float64Array(BLOCK)
+      addPeakSquared(force, block.count, peak, 0)
+      return peak
+    })
     for (let f = 0; f < block.count; f++) {
       const total = sumAt(forces, f)
       const { re, im } = orderVector(loads, block.omega[f]!)
@@ -107,10 +112,10 @@ function detailOfOrder(
           })),
           support: vectorAt(total, 0),
         },
-        support: peakSquared(total, 0),
-        supportSize: sizeSquared(total, 0),
+        support: atOne(total, addPeakSquared),
+        supportSize: atOne(total, addSizeSquared),
         excitation: squareOf(excitation.slice(0, 3)),
-        mounts: forces.map((force) => peakSquared(force, f)),
+        mounts: peaks.map((peak) => peak[f]!),
       })
     }
   })
@@ -145,6 +150,13 @@ function overall(observed: Observed, speed: number, details: readonly Detail[]):
       }),
     ),
   }
+}
+
+/** What an adding function makes of a vector's first entry. */
+function atOne(vector: BlockVector, add: typeof addPeakSquared): number {
+  const sum = new Float64Array(1)
+  add(vector, 1, sum, 0)
+  return sum[0]!
 }
 
 function sumAt(forces: readonly BlockVector[], f: number): BlockVector {

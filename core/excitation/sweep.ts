@@ -1,15 +1,16 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays of the sweep's length by construction */
-import { respond } from '../network/response.ts'
+import { respond, type LoadCase } from '../network/response.ts'
+import type { ComplexParts } from '../numerics/block-combine.ts'
 import { isUnbounded } from '../numerics/block-symmetric.ts'
 import type { Sweep } from '../results.ts'
 import {
+  addPeakSquared,
+  addSizeSquared,
   addVector,
   blockCurve,
   blockVector,
-  peakSquared,
   readForce,
   readRow,
-  sizeSquared,
 } from '../network/block-reader.ts'
 import { orderLoadCase, type Observed } from './observed.ts'
 import type { SourceLoad } from './order-loads.ts'
@@ -46,8 +47,8 @@ export function sweepResponse(observed: Observed, orders: Orders, speed: Float64
 /** At a resonance without damping there is no value, and so no point on the curve. */
 function withoutUnbounded(sweep: Sweep): Sweep {
   const curves = [sweep.supportForce, ...sweep.mountForces, ...sweep.pointVelocity.flat(), ...sweep.strokes]
+  if (curves.every(isBounded)) return sweep
   const bounded = sweep.speed.map((_, f) => (curves.some((curve) => isUnbounded(curve[f]!)) ? 0 : 1))
-  if (bounded.every((one) => one === 1)) return sweep
   const keep = (curve: Float64Array) => curve.filter((_, f) => bounded[f] === 1)
   return {
     speed: keep(sweep.speed),
@@ -89,6 +90,7 @@ function addOrder(
   const scratch = blockCurve()
   const force = blockVector()
   const total = blockVector()
+  const { supports, points, absorbers } = observed
   const omegas = speed.map((value) => order * value)
   respond(observed.solver, omegas, [load], (block) => {
     const { first, count, omega } = block
@@ -96,45 +98,66 @@ function addOrder(
       part.re.fill(0)
       part.im.fill(0)
     }
-    observed.supports.forEach((support, index) => {
-      readForce(support, block, scratch, force)
+    for (let m = 0; m < supports.length; m++) {
+      readForce(supports[m]!, block, scratch, force)
       addVector(total, force, count)
-      const sum = sums.mounts[index]!
-      for (let f = 0; f < count; f++) sum[first + f]! += peakSquared(force, f)
-    })
-    for (let f = 0; f < count; f++) {
-      sums.support[first + f]! += peakSquared(total, f)
-      sums.supportSize[first + f]! += sizeSquared(total, f)
-      sums.excitation[first + f]! += excitingForceSquared(observed, load, omega[f]!)
+      addPeakSquared(force, count, sums.mounts[m]!, first)
     }
-    observed.points.forEach((rows, index) => {
-      rows.forEach((row, axis) => {
-        readRow(row, block, scratch)
-        const sum = sums.points[index]![axis]!
-        for (let f = 0; f < count; f++) {
-          sum[first + f]! += omega[f]! ** 2 * (scratch.re[f]! ** 2 + scratch.im[f]! ** 2)
-        }
-      })
-    })
-    observed.absorbers.forEach(({ stroke }, index) => {
-      readRow(stroke, block, scratch)
-      const sum = sums.strokes[index]!
-      for (let f = 0; f < count; f++) sum[first + f]! += Math.sqrt(scratch.re[f]! ** 2 + scratch.im[f]! ** 2)
-    })
+    addPeakSquared(total, count, sums.support, first)
+    addSizeSquared(total, count, sums.supportSize, first)
+    addExcitingForce(observed, load, omega, count, sums.excitation, first)
+    for (let p = 0; p < points.length; p++) {
+      for (let axis = 0; axis < 3; axis++) {
+        readRow(points[p]![axis]!, block, scratch)
+        addVelocitySquared(scratch, omega, count, sums.points[p]![axis]!, first)
+      }
+    }
+    for (let a = 0; a < absorbers.length; a++) {
+      readRow(absorbers[a]!.stroke, block, scratch)
+      addSize(scratch, count, sums.strokes[a]!, first)
+    }
   })
 }
 
-function excitingForceSquared(
+function addExcitingForce(
   { machineFreedom }: Observed,
-  load: ReturnType<typeof orderLoadCase>,
-  omega: number,
-): number {
-  let sum = 0
-  const square = omega * omega
+  load: LoadCase,
+  omega: Float64Array,
+  count: number,
+  sum: Float64Array,
+  first: number,
+): void {
   for (let at = machineFreedom; at < machineFreedom + 3; at++) {
-    const re = load.constantRe[at]! + square * load.squaredRe[at]!
-    const im = load.constantIm[at]! + square * load.squaredIm[at]!
-    sum += re * re + im * im
+    const constantRe = load.constantRe[at]!
+    const constantIm = load.constantIm[at]!
+    const squaredRe = load.squaredRe[at]!
+    const squaredIm = load.squaredIm[at]!
+    for (let f = 0; f < count; f++) {
+      const square = omega[f]! * omega[f]!
+      const re = constantRe + square * squaredRe
+      const im = constantIm + square * squaredIm
+      sum[first + f]! += re * re + im * im
+    }
   }
-  return sum
+}
+
+function addVelocitySquared(
+  { re, im }: ComplexParts,
+  omega: Float64Array,
+  count: number,
+  sum: Float64Array,
+  first: number,
+): void {
+  for (let f = 0; f < count; f++) {
+    sum[first + f]! += omega[f]! * omega[f]! * (re[f]! * re[f]! + im[f]! * im[f]!)
+  }
+}
+
+function addSize({ re, im }: ComplexParts, count: number, sum: Float64Array, first: number): void {
+  for (let f = 0; f < count; f++) sum[first + f]! += Math.sqrt(re[f]! * re[f]! + im[f]! * im[f]!)
+}
+
+function isBounded(curve: Float64Array): boolean {
+  for (let f = 0; f < curve.length; f++) if (isUnbounded(curve[f]!)) return false
+  return true
 }

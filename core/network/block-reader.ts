@@ -82,42 +82,51 @@ function addForce(
 }
 
 /**
- * Square of the largest length that the vector Re(F exp(i omega t)) reaches in a cycle:
- * (|F|² + |F·F|) / 2 with F·F the sum of squares, unconjugated (semi-major axis of its ellipse).
+ * Adds to `sum`, from index `first` on, the square of the largest length that the vector
+ * Re(F exp(i omega t)) reaches in a cycle: (|F|² + |F·F|) / 2 with F·F the sum of squares,
+ * unconjugated (semi-major axis of its ellipse).
  */
-export function peakSquared(vector: BlockVector, f: number): number {
-  let size = 0
-  let real = 0
-  let imaginary = 0
-  for (let axis = 0; axis < 3; axis++) {
-    const a = vector[axis]!.re[f]!
-    const b = vector[axis]!.im[f]!
-    size += a * a + b * b
-    real += a * a - b * b
-    imaginary += 2 * a * b
+export function addPeakSquared(
+  [{ re: xRe, im: xIm }, { re: yRe, im: yIm }, { re: zRe, im: zIm }]: BlockVector,
+  count: number,
+  sum: Float64Array,
+  first: number,
+): void {
+  for (let f = 0; f < count; f++) {
+    const a = xRe[f]!
+    const b = xIm[f]!
+    const c = yRe[f]!
+    const d = yIm[f]!
+    const e = zRe[f]!
+    const g = zIm[f]!
+    const real = a * a + c * c + e * e
+    const imaginary = b * b + d * d + g * g
+    const difference = real - imaginary
+    const cross = 2 * (a * b + c * d + e * g)
+    sum[first + f]! += (real + imaginary + Math.sqrt(difference * difference + cross * cross)) / 2
   }
-  return (size + Math.sqrt(real * real + imaginary * imaginary)) / 2
 }
 
-/** Sum of |F|² over the three directions. */
-export function sizeSquared(vector: BlockVector, f: number): number {
-  let size = 0
-  for (let axis = 0; axis < 3; axis++) {
-    const a = vector[axis]!.re[f]!
-    const b = vector[axis]!.im[f]!
-    size += a * a + b * b
+/** Adds |F|², the sum over the three directions, to `sum` from index `first` on. */
+export function addSizeSquared(
+  [{ re: xRe, im: xIm }, { re: yRe, im: yIm }, { re: zRe, im: zIm }]: BlockVector,
+  count: number,
+  sum: Float64Array,
+  first: number,
+): void {
+  for (let f = 0; f < count; f++) {
+    sum[first + f]! += xRe[f]! ** 2 + xIm[f]! ** 2 + yRe[f]! ** 2 + yIm[f]! ** 2 + zRe[f]! ** 2 + zIm[f]! ** 2
   }
-  return size
 }
 
 /** target += vector */
 export function addVector(target: BlockVector, vector: BlockVector, count: number): void {
   for (let axis = 0; axis < 3; axis++) {
-    const to = target[axis]!
-    const from = vector[axis]!
+    const { re: toRe, im: toIm } = target[axis]!
+    const { re, im } = vector[axis]!
     for (let f = 0; f < count; f++) {
-      to.re[f]! += from.re[f]!
-      to.im[f]! += from.im[f]!
+      toRe[f]! += re[f]!
+      toIm[f]! += im[f]!
     }
   }
 }
