@@ -5,7 +5,7 @@ import { hostCurves } from './curves.ts'
 import { fixedPointTuning } from './fixed-points.ts'
 import { hostOf, type Host } from './host.ts'
 import { kindOf, travelShape, unboundedAt, type Kind, type Shape } from './kinds.ts'
-import { barePeak, worstPeak } from './peaks.ts'
+import { barePeak, worstPeak, type Peak } from './peaks.ts'
 import { shapeMagnitude, type HostAndAbsorber } from './response.ts'
 import type { Receptance } from './receptance-panels.ts'
 import { splitFrequencyRatios } from './running-speed.ts'
@@ -122,11 +122,16 @@ function describe(absorber: Absorber, host: Host, tuning: Tuning, gravity: numbe
   }
 }
 
-function highestAt(peaks: readonly { readonly at: number; readonly height: number }[]): number | null {
-  const first = peaks[0]
-  if (!first) return null
-  return peaks.reduce((most, peak) => (peak.height > most.height ? peak : most), first).at
+/**
+ * Where the highest peak stands; of peaks level to rounding the faster one, which tires a spring sooner.
+ * (At the classical optimum under a force both travel peaks are level.)
+ */
+function highestAt(peaks: readonly Peak[]): number | null {
+  const highest = peaks.reduce((most, { height }) => Math.max(most, height), 0)
+  return peaks.findLast(({ height }) => height >= highest * (1 - LEVEL))?.at ?? null
 }
+
+const LEVEL = 1e-9
 
 function closedForm(kind: Kind, massRatio: number): AbsorberResult['closedForm'] {
   const found = fixedPointTuning(kind, massRatio)

@@ -137,6 +137,9 @@ function massOf(absorber: Absorber, host: Host, field: string, omega: number): n
 /** Excess of the closed form's peak over the least possible one from which it is worth a word. */
 const WORTH_A_WORD = 0.01
 
+/** Within a thousandth of the value that no absorber lowers there is nothing left to tune. */
+const AT_FLOOR = 1.001
+
 function byFixedPoints(
   kind: Kind,
   host: Host,
@@ -172,13 +175,12 @@ function byMinimax(kind: Kind, host: Host, mass: number, massRatio: number, fiel
   }
   const found = hostOptimum(kind, massRatio, host.dampingRatio)
   const problems: Problem[] = []
-  if (!found.converged) {
-    const message = `the search for the least worst peak did not settle (after ${found.iterations} steps): look at the curve before using it`
-    problems.push(caution(`${field}.tuning.by`, message))
-  }
-  if (found.atEnd) {
+  if (found.peak <= found.floor * AT_FLOOR) {
     const message =
-      'the largest value is the one far below or far above resonance, which no absorber lowers; the peaks between are as low as they can be'
+      'the largest value is the one far below or far above resonance, which no absorber lowers: this absorber does little here'
+    problems.push(caution(`${field}.tuning.by`, message))
+  } else if (!found.converged) {
+    const message = `the search for the least worst peak did not settle (after ${found.iterations} steps): look at the curve before using it`
     problems.push(caution(`${field}.tuning.by`, message))
   }
   const { frequencyRatio, dampingRatio } = found
