@@ -99,15 +99,7 @@ async function buildShell(folder) {
 
 async function bundle(folder, format, entries, define = {}) {
   const { build } = await import('vite')
-  const input = Object.fromEntries(
-    Object.entries(entries)
-      .map(([name, path]) => [name, join(ROOT, path)])
-      .filter(
-        ([name, path]) =>
-          existsSync(path) &&
-          (name !== 'report-worker' || existsSync(join(ROOT, 'electron/report/draw-report.ts'))),
-      ),
-  )
+  const input = Object.fromEntries(Object.entries(entries).map(([name, path]) => [name, join(ROOT, path)]))
   const extension = format === 'cjs' ? 'cjs' : 'js'
   await build({
     root: ROOT,
