@@ -34,7 +34,7 @@ interface Step {
   readonly predicted: number
 }
 
-const MOST_ITERATIONS = 80
+const MOST_ITERATIONS = 60
 /** Quadratic convergence leaves the square of this. */
 const STEP_TOLERANCE = 1e-9
 

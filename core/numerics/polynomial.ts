@@ -71,10 +71,15 @@ function rootsBetween(c: Float64Array, low: number, critical: readonly number[],
   return roots
 }
 
-/** Newton's method kept inside a bracket that bisection shrinks; ends at the precision of the arithmetic. */
+/**
+ * Newton's method kept inside a bracket; a step that does not halve the one before gives way to
+ * bisection, so that a distant start costs no more than a close one. Ends at the precision of the
+ * arithmetic.
+ */
 function bracketedRoot(c: Float64Array, low: number, high: number, rising: boolean): number {
   const top = c.length - 1
   let x = middle(low, high)
+  let lastStep = high - low
   for (let iteration = 0; iteration < 200; iteration++) {
     let value = c[top] ?? 0
     let slope = 0
@@ -86,16 +91,17 @@ function bracketedRoot(c: Float64Array, low: number, high: number, rising: boole
     if (value < 0 === rising) low = x
     else high = x
     let next = x - value / slope
-    // a wide step back to the middle keeps the worst case at bisection's pace
-    if (!(next > low && next < high)) next = middle(low, high)
-    if (Math.abs(next - x) <= 4e-16 * Math.abs(next) || next === low || next === high) return next
+    if (!(next > low && next < high) || Math.abs(next - x) > lastStep / 2) next = middle(low, high)
+    lastStep = Math.abs(next - x)
+    if (lastStep <= 4e-16 * Math.abs(next) || next === low || next === high) return next
     x = next
   }
   return x
 }
 
-/** Halfway; in ratio where the bracket spans orders of magnitude on one side of zero. */
+/** Halfway; in ratio where the bracket spans orders of magnitude upwards. */
 function middle(low: number, high: number): number {
   if (low > 0 && high > 16 * low) return Math.sqrt(low) * Math.sqrt(high)
+  if (low <= 0 && high > 16 * (1 - low)) return Math.sqrt(high) * Math.sqrt(1 - low)
   return low + (high - low) / 2
 }
