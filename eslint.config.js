@@ -10,6 +10,7 @@ const CORE_LAYERS = [
   'network',
   'excitation',
   'mounts',
+  'runup',
   'absorber',
   'criteria',
   'verdict',

@@ -5,6 +5,7 @@ import { label } from './fields.ts'
 import { machineSchema } from './machine.ts'
 import { mountingSchema } from './mounts.ts'
 import { requirementSchema } from './requirements.ts'
+import { runUpSchema } from './run-up.ts'
 import { sourceSchema } from './sources.ts'
 
 export const PROJECT_FORMAT = 'stillbed-project'
@@ -60,6 +61,7 @@ export const projectSchema = z
       .default({ kind: 'rigid' })
       .meta({ description: 'what the mounts stand on' }),
     mounting: mountingSchema,
+    runUp: runUpSchema,
     absorbers: z
       .array(absorberSchema)
       .max(10)

@@ -34,6 +34,13 @@ export const DIMENSIONS = {
   },
   force: { base: 'N', baseLabel: 'N', SI: ['N', 'N'], US: ['lbf', 'lbf'] },
   moment: { base: 'N m', baseLabel: 'N m', SI: ['N m', 'N m'], US: ['lbf ft', 'lbf ft'] },
+  /** stress in a material, and its moduli */
+  stress: { base: 'Pa', baseLabel: 'Pa', SI: ['MPa', 'MPa'], US: ['psi', 'psi'] },
+  /** of a gas */
+  pressure: { base: 'Pa', baseLabel: 'Pa', SI: ['bar', 'bar'], US: ['psi', 'psi'] },
+  area: { base: 'm^2', baseLabel: 'm²', SI: ['mm^2', 'mm²'], US: ['inch^2', 'in²'] },
+  volume: { base: 'm^3', baseLabel: 'm³', SI: ['litre', 'L'], US: ['inch^3', 'in³'] },
+  density: { base: 'kg/m^3', baseLabel: 'kg/m³', SI: ['kg/m^3', 'kg/m³'], US: ['lb/ft^3', 'lb/ft³'] },
   unbalance: { base: 'kg m', baseLabel: 'kg m', SI: ['g mm', 'g mm'], US: ['oz inch', 'oz in'] },
   shaftSpeed: { base: 'rad/s', baseLabel: 'rad/s', SI: ['rpm', 'rpm'], US: ['rpm', 'rpm'] },
   frequency: { base: 'Hz', baseLabel: 'Hz', SI: ['Hz', 'Hz'], US: ['Hz', 'Hz'] },
@@ -41,6 +48,7 @@ export const DIMENSIONS = {
   acceleration: { base: 'm/s^2', baseLabel: 'm/s²', SI: ['m/s^2', 'm/s²'], US: ['ft/s^2', 'ft/s²'] },
   /** balance quality grade, e·omega: the same figure in both systems */
   balanceGrade: { base: 'm/s', baseLabel: 'm/s', SI: ['mm/s', 'mm/s'], US: ['mm/s', 'mm/s'] },
+  time: { base: 's', baseLabel: 's', SI: ['s', 's'], US: ['s', 's'] },
   angle: { base: 'rad', baseLabel: 'rad', SI: ['deg', '°'], US: ['deg', '°'] },
   ratio: { base: '', baseLabel: '', SI: ['', ''], US: ['', ''] },
   /** a share shown in percent and stored as a fraction */
