@@ -31,15 +31,27 @@ export interface BarCrossing {
   readonly row: number | null
 }
 
-/** Round speeds under the bar. @param top [rad/s] @param width [px] */
-export function barTicks(top: number, width: number): readonly BarTick[] {
+/**
+ * Round speeds under the bar.
+ * @param top [rad/s]
+ * @param width [px]
+ * @param kept place and width of the text that the ticks must leave free [px]; null: none
+ */
+export function barTicks(
+  top: number,
+  width: number,
+  kept: { readonly left: number; readonly width: number } | null,
+): readonly BarTick[] {
   const factor = factorOf('shaftSpeed', 'SI')
   const last = top / factor
   const step = roundUp(last / Math.max(2, Math.floor(width / TICK_ROOM)))
   const ticks: BarTick[] = []
   for (let index = 0; index * step <= last * (1 + 1e-9); index += 1) {
     const value = index * step
-    ticks.push({ left: (value / last) * width, text: formatPlain(value, 6) })
+    const left = (value / last) * width
+    const text = formatPlain(value, 6)
+    const clear = kept === null || Math.abs(left - kept.left) > (kept.width + text.length * LETTER) / 2 + 4
+    if (clear) ticks.push({ left, text })
   }
   return ticks
 }

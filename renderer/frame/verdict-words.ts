@@ -5,8 +5,8 @@ import type { UnitSystem } from '../../core/units/dimensions.ts'
 import type { Step } from '../state/route.svelte.ts'
 
 export const STATUS_WORDS: Readonly<Record<VerdictStatus, string>> = {
-  pass: 'holds',
-  near: 'near the limit',
+  pass: 'met',
+  near: 'met, near the limit',
   fail: 'fails',
   unknown: 'not known',
 }

@@ -8,13 +8,16 @@ const RATIOS = [0.01, 0.02, 0.035, 0.05, 0.075, 0.1, 0.15, 0.2, 0.3] as const
 /**
  * The same machine with the absorber in a row of sizes, each designed by its own rule and none in
  * place, so that one evaluation answers for all; nothing excites and nothing is judged.
+ * @param present mass ratio of the absorber as it is
  */
-export function massTrials(project: Project, absorber: Absorber): Project {
+export function massTrials(project: Project, absorber: Absorber, present: number): Project {
+  // a present ratio among the usual ones needs no second trial
+  const ratios = [...new Set([...RATIOS, present])].toSorted((a, b) => a - b)
   return {
     ...project,
     sources: [],
     requirements: [],
-    absorbers: RATIOS.map((ratio) => ({
+    absorbers: ratios.map((ratio) => ({
       ...absorber,
       id: `ratio-${ratio}`,
       enabled: false,
