@@ -5,7 +5,12 @@
  * between verified brackets, none can be missed between samples. Everything is expanded about g = f = 1
  * (delta = x - 1, alpha = f² - 1), where the peaks of small absorbers crowd together.
  */
-import { polynomialProduct, realRoots } from '../numerics/polynomial.ts'
+import {
+  polynomialDerivative,
+  polynomialProduct,
+  polynomialValue,
+  realRoots,
+} from '../numerics/polynomial.ts'
 import { unboundedAt, valueAtInfinity, valueAtZero, type Shape } from './kinds.ts'
 import { levelPolynomial, logShape, logShapeJet, magnitudeAt, type LogShape } from './log-shape.ts'
 import type { HostAndAbsorber } from './response.ts'
@@ -49,8 +54,10 @@ export function worstPeak(shape: Shape, system: HostAndAbsorber): WorstPeak {
 export function localMaxima(shape: LogShape, alpha: number, b: number): Peak[] | null {
   if (b === 0 && shape.h === 0) return null
   const peaks: Peak[] = []
-  for (const root of realRoots(levelPolynomial(shape, alpha, b), -1, farthest(shape, alpha, b))) {
-    if (root <= -1) continue
+  const level = levelPolynomial(shape, alpha, b)
+  const falling = polynomialDerivative(level)
+  for (const root of realRoots(level, -1, farthest(shape, alpha, b), ROOT_STEP)) {
+    if (root <= -1 || polynomialValue(falling, root) > 0) continue
     let delta = root
     let jet = logShapeJet(shape, delta, alpha, b)
     // One step of Newton's method on the factored form wins back digits that expanding it cost
@@ -66,6 +73,9 @@ export function localMaxima(shape: LogShape, alpha: number, b: number): Peak[] |
   }
   return peaks
 }
+
+/** The step of Newton's method that follows squares what this leaves. */
+const ROOT_STEP = 1e-7
 
 /**
  * A delta beyond every peak. Past the largest root of the denominator the curve follows a single power of

@@ -35,8 +35,14 @@ let nextBreaks = new Float64Array(2 * MOST_COEFFICIENTS)
  * touches zero is found when its touch is exact; a nearly double root may be missed or come twice.
  * Roots near 0 keep their relative precision: shift a cluster of roots to the origin before calling.
  * @param coefficients of a polynomial of degree 15 at most
+ * @param tolerance relative size of the last step of Newton's method; its square is what is left
  */
-export function realRoots(coefficients: ArrayLike<number>, low: number, high: number): number[] {
+export function realRoots(
+  coefficients: ArrayLike<number>,
+  low: number,
+  high: number,
+  tolerance = 4e-16,
+): number[] {
   let degree = coefficients.length - 1
   while (degree > 0 && coefficients[degree] === 0) degree--
   if (degree < 1 || !(low < high)) return []
@@ -52,7 +58,7 @@ export function realRoots(coefficients: ArrayLike<number>, low: number, high: nu
   let count = 0
   for (let k = 1; k <= degree; k++) {
     // break points need not be exact: a piece cut a little beside an extremum still holds its root
-    count = rootsBetween(rowOf(k), k, low, count, high, k === degree ? 4e-16 : 1e-7)
+    count = rootsBetween(rowOf(k), k, low, count, high, k === degree ? tolerance : 1e-7)
     const spare = breaks
     breaks = nextBreaks
     nextBreaks = spare
