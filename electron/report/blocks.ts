@@ -56,10 +56,10 @@ function factTable(rows: readonly Fact[]): Content {
 function dataTable(table: ReportTable): Content {
   const { columns } = table
   const header: TableCell[] = columns.map(({ label, unit, align }) => ({
-    text:
-      unit === ''
-        ? label
-        : [label, { text: `\n[${unbroken(unit)}]`, bold: false, color: INK_SOFT, noWrap: true }],
+    stack: [
+      { text: label },
+      ...(unit === '' ? [] : [{ text: `[${unit}]`, bold: false, color: INK_SOFT, noWrap: true }]),
+    ],
     alignment: align === 'end' ? 'right' : 'left',
     style: 'tableHead',
     fillColor: FILL_HEAD,
@@ -73,7 +73,8 @@ function dataTable(table: ReportTable): Content {
     return row.map((cell, at): TableCell => {
       const figures = columns[at]?.align === 'end'
       return {
-        text: figures ? unbroken(cell) : breakable(cell),
+        text: figures ? cell : breakable(cell),
+        noWrap: figures, // a number stays with its unit
         alignment: figures ? 'right' : 'left',
         ...markLook(mark, at === row.length - 1),
       }
@@ -102,9 +103,6 @@ function columnWidths(table: ReportTable): (string | number)[] {
     align === 'start' && (longest[index] ?? 0) > 22 ? '*' : 'auto',
   )
 }
-
-/** A number stays with its unit. */
-const unbroken = (text: string): string => text.replaceAll(' ', '\u00a0')
 
 /** A word without a blank must still find its line's end. */
 function breakable(text: string): string {

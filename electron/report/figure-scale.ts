@@ -52,7 +52,7 @@ function extent(values: readonly number[]): readonly [number, number] {
   return high > low ? [low, high] : [low - 0.5 * Math.abs(low || 1), low + 0.5 * Math.abs(low || 1)]
 }
 
-const WANTED_TICKS = 8
+const WANTED_TICKS = 10
 
 export function linearScale(from: number, to: number): Scale {
   const step = roundStep((to - from) / WANTED_TICKS)

@@ -36,6 +36,7 @@ export function figureSvg(figure: Figure, size: FigureSize): string {
     gridLines(plot),
     ...figure.limits.map((limit) => limitHatch(limit, plot)),
     markLines(figure, plot, marks.places),
+    operatingBar(figure, plot),
     ...figure.series.map((series) => curve(series, plot)),
     ...figure.limits.map((limit) => limitLine(limit, plot)),
     frame(plot),
@@ -202,15 +203,27 @@ function limitLine(limit: FigureLimit, plot: Plot): string {
   ].join('')
 }
 
+function operatingEnds(figure: Figure, plot: Plot): readonly [number, number] | null {
+  if (figure.operating === null) return null
+  const [from, to] = figure.operating
+  return [Math.max(plot.left, px(plot, from)), Math.min(plot.left + plot.width, px(plot, to))]
+}
+
 function operatingBand(figure: Figure, plot: Plot): string {
-  if (figure.operating === null) return ''
-  const from = Math.max(plot.left, px(plot, figure.operating[0]))
-  const to = Math.min(plot.left + plot.width, px(plot, figure.operating[1]))
+  const ends = operatingEnds(figure, plot)
+  if (ends === null) return ''
+  return `<rect x="${n(ends[0])}" y="${n(plot.top)}" width="${n(ends[1] - ends[0])}" height="${n(plot.height)}" fill="${SPEED}" fill-opacity="0.05"/>`
+}
+
+function operatingBar(figure: Figure, plot: Plot): string {
+  const ends = operatingEnds(figure, plot)
+  if (ends === null) return ''
   const bottom = plot.top + plot.height
+  const middle = (ends[0] + ends[1]) / 2
   return [
-    `<rect x="${n(from)}" y="${n(plot.top)}" width="${n(to - from)}" height="${n(plot.height)}" fill="${SPEED}" fill-opacity="0.05"/>`,
-    line(from, bottom - 3, to, bottom - 3, { stroke: SPEED, width: 2 }),
-    text((from + to) / 2, bottom - 6.5, 'operating speeds', { anchor: 'middle', fill: SPEED }),
+    `<rect x="${n(middle - 31)}" y="${n(bottom - 13)}" width="62" height="9" fill="#ffffff" fill-opacity="0.8"/>`,
+    line(ends[0], bottom - 2, ends[1], bottom - 2, { stroke: SPEED, width: 2 }),
+    text(middle, bottom - 6, 'operating speeds', { anchor: 'middle', fill: SPEED }),
   ].join('')
 }
 

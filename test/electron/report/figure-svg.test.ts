@@ -85,7 +85,18 @@ describe('a figure as a vector drawing', () => {
 
 describe('scales', () => {
   it('put round numbers on a linear axis', () => {
-    expect(linearScale(0, 1800).ticks.map((tick) => tick.text)).toEqual(['0', '500', '1000', '1500'])
+    expect(linearScale(0, 900).ticks.map((tick) => tick.text)).toEqual([
+      '0',
+      '100',
+      '200',
+      '300',
+      '400',
+      '500',
+      '600',
+      '700',
+      '800',
+      '900',
+    ])
     expect(linearScale(0.3, 1.9).ticks.map((tick) => tick.text)).toContain('0.4')
   })
 
