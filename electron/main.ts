@@ -3,7 +3,7 @@
  * since a wait at the top level of this module would never end: Electron becomes ready only
  * after the module has been evaluated.
  */
-import type { BrowserWindow} from 'electron';
+import type { BrowserWindow } from 'electron'
 import { app, dialog, session, shell } from 'electron'
 import { readFile, stat } from 'node:fs/promises'
 import { dirname, join, resolve } from 'node:path'

@@ -8,14 +8,15 @@ export const reportHandlers: AreaHandlers<'report'> = {
   },
 }
 
+/** Names that Windows keeps for devices. */
+const RESERVED = /^(con|prn|aux|nul|com\d|lpt\d)$/i
+
 /** A project's name as a file name that every system takes. */
 export function fileStem(name: string): string {
   const stem = name
     .replace(/[^\p{L}\p{N} ._-]+/gu, ' ')
     .replace(/\s+/g, ' ')
-    .trim()
-    .replace(/^\.+|\.+$/g, '')
     .slice(0, 80)
-    .trim()
-  return stem === '' ? 'Stillbed report' : stem
+    .replace(/^[. ]+|[. ]+$/g, '')
+  return stem === '' || RESERVED.test(stem) ? `${stem} Stillbed report`.trim() : stem
 }

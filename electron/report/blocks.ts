@@ -23,9 +23,9 @@ const SHORT_TABLE = 14
 export function drawBlock(block: Block, width: number): DrawnBlock {
   switch (block.kind) {
     case 'heading':
-      return { content: { text: block.text, style: 'subheading' }, long: false }
+      return { content: { text: breakable(block.text), style: 'subheading' }, long: false }
     case 'paragraph':
-      return { content: { text: block.text, margin: [0, 0, 0, 5] }, long: false }
+      return { content: { text: breakable(block.text), margin: [0, 0, 0, 5] }, long: false }
     case 'facts':
       return { content: factTable(block.rows), long: block.rows.length > 22 }
     case 'table':
@@ -43,7 +43,7 @@ function factTable(rows: readonly Fact[]): Content {
   return {
     table: {
       widths: [205, '*'],
-      body: rows.map(({ label, value }) => [{ text: label, color: INK_SOFT }, { text: value }]),
+      body: rows.map(({ label, value }) => [{ text: label, color: INK_SOFT }, { text: breakable(value) }]),
       dontBreakRows: true,
     },
     layout: 'facts',
@@ -105,7 +105,7 @@ function columnWidths(table: ReportTable): (string | number)[] {
 }
 
 /** A word without a blank must still find its line's end. */
-function breakable(text: string): string {
+export function breakable(text: string): string {
   return text.replace(/[^\s]{28}(?=[^\s]{4})/g, '$&\u200b')
 }
 

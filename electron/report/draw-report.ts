@@ -5,7 +5,7 @@ import { evaluate } from '../../core/evaluate.ts'
 import type { Project } from '../../core/project/project.ts'
 import { buildReport } from '../../core/report/build-report.ts'
 import type { Report, ReportSection } from '../../core/report/report.ts'
-import { drawBlock } from './blocks.ts'
+import { breakable, drawBlock } from './blocks.ts'
 import { DANGER, FONT, INK, INK_SOFT, MARGIN, RULE, RULE_STRONG, TEXT_SIZE } from './paper.ts'
 
 const require = createRequire(import.meta.url)
@@ -130,7 +130,7 @@ function titleBlock(report: Report): Content {
           {
             stack: [
               { text: 'Calculation report', color: INK_SOFT },
-              { text: report.title, style: 'title', margin: [0, 4, 0, 4] },
+              { text: breakable(report.title), style: 'title', margin: [0, 4, 0, 4] },
               { text: 'Mounting and absorbers of a machine', color: INK_SOFT },
             ],
           },
@@ -139,7 +139,7 @@ function titleBlock(report: Report): Content {
               widths: [92, '*'],
               body: report.titleBlock.map(({ label, value }) => [
                 { text: label, color: INK_SOFT },
-                { text: value },
+                { text: breakable(value) },
               ]),
             },
             layout: 'plain',
@@ -153,11 +153,17 @@ function titleBlock(report: Report): Content {
   }
 }
 
+const LONGEST_HEAD = 70
+
+function shortened(text: string): string {
+  return text.length > LONGEST_HEAD ? `${text.slice(0, LONGEST_HEAD - 1)}…` : text
+}
+
 function pageHead(report: Report): Content {
   return {
     margin: [MARGIN.left, 26, MARGIN.right, 0],
     columns: [
-      { text: report.title, bold: true, fontSize: 8 },
+      { text: shortened(report.title), bold: true, fontSize: 8 },
       { text: 'Calculation report', alignment: 'right', color: INK_SOFT, fontSize: 8 },
     ],
   }

@@ -1,4 +1,4 @@
-import type { Figure, FigureLimit, FigureSeries } from '../../core/report/report.ts'
+import type { Figure, FigureLimit, FigureMark, FigureSeries } from '../../core/report/report.ts'
 import { formatPlain } from '../../core/units/format.ts'
 import { axisTitle, xScale, yScale, type Scale } from './figure-scale.ts'
 import { CURVES, DANGER, DASHES, GRID, INK, INK_SOFT, RULE_STRONG, SPEED, WIDTHS } from './paper.ts'
@@ -228,20 +228,32 @@ function operatingBar(figure: Figure, plot: Plot): string {
 }
 
 interface MarkPlace {
-  readonly row: number
+  /** null: there is no room left for its label */
+  readonly row: number | null
 }
+
+const MOST_ROWS = 3
+
+/** The running speed has the first choice of a place. */
+const rank = (mark: FigureMark) => (mark.kind === 'running' ? 0 : 1)
 
 /** Labels of vertical marks in as many rows as keep them apart. */
 function markRows(figure: Figure, width: number): { rows: number; places: readonly MarkPlace[] } {
   const scale = xScale(figure)
   const ends: number[] = []
-  const order = figure.marks.map((mark, index) => ({ mark, index })).sort((a, b) => a.mark.at - b.mark.at)
+  const order = figure.marks
+    .map((mark, index) => ({ mark, index }))
+    .sort((a, b) => rank(a.mark) - rank(b.mark) || a.mark.at - b.mark.at)
   const places: MarkPlace[] = figure.marks.map(() => ({ row: 0 }))
   for (const { mark, index } of order) {
     const at = (width - 56) * scale.place(mark.at)
     const half = 2.2 * mark.label.length + 2
     let row = ends.findIndex((end) => end < at - half)
     if (row < 0) row = ends.length
+    if (row >= MOST_ROWS) {
+      places[index] = { row: null }
+      continue
+    }
     ends[row] = at + half
     places[index] = { row }
   }
@@ -253,14 +265,17 @@ function markLines(figure: Figure, plot: Plot, places: readonly MarkPlace[]): st
     .map((mark, index) => {
       const at = px(plot, mark.at)
       if (at < plot.left || at > plot.left + plot.width) return ''
-      const top = plot.top - 3 - 10 * (places[index]?.row ?? 0)
+      const row = places[index]?.row ?? null
+      const top = plot.top - 3 - 10 * (row ?? 0)
       const running = mark.kind === 'running'
       const look: LineLook = running
         ? { stroke: SPEED, width: 1.1 }
         : { stroke: RULE_STRONG, width: 0.5, dash: '1 2' }
       return [
         line(at, top + 1, at, plot.top + plot.height, look),
-        text(at, top, mark.label, { anchor: 'middle', fill: running ? SPEED : INK_SOFT, bold: running }),
+        row === null
+          ? ''
+          : text(at, top, mark.label, { anchor: 'middle', fill: running ? SPEED : INK_SOFT, bold: running }),
       ].join('')
     })
     .join('')

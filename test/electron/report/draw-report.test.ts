@@ -86,6 +86,33 @@ describe('printed report', () => {
     }
   })
 
+  it('keeps a crowded project on its pages', async () => {
+    const long = 'W'.repeat(180)
+    const crowded: Project = {
+      ...withAbsorbers(project),
+      job: { ...project.job, name: long, notes: `${long}${long}`, site: long },
+      sources: Array.from({ length: 30 }, (_, index) => ({
+        kind: 'harmonic',
+        id: `s${index}`,
+        name: long,
+        enabled: true,
+        position: null,
+        load: { kind: 'force', direction: [0, 0, 1], amplitude: 10 },
+        order: 0.5 * (index + 1),
+        dependence: { on: 'constant' },
+        phase: 0,
+      })),
+      absorbers: Array.from({ length: 4 }, (_, index) => ({
+        ...(withAbsorbers(project).absorbers[0] as Project['absorbers'][number]), // it has one
+        id: `a${index}`,
+        name: `${index} ${long}`,
+      })),
+    }
+    const report = buildReport(crowded, evaluate(crowded, { sweepPoints: 60 }))
+    const pages = await pdfPages(await drawPages(report, MADE_AT))
+    for (const page of pages) expect(page.rightmost).toBeLessThanOrEqual(page.width - 30)
+  })
+
   it('takes names in other alphabets and markup as plain words', async () => {
     const odd: Project = {
       ...project,

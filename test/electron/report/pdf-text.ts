@@ -5,6 +5,8 @@ export interface PdfPage {
   readonly text: string
   readonly width: number
   readonly height: number
+  /** right end of the word that reaches furthest [pt] */
+  readonly rightmost: number
 }
 
 /** Reads the pages of a PDF back as text. */
@@ -18,7 +20,8 @@ export async function pdfPages(bytes: Uint8Array): Promise<readonly PdfPage[]> {
         const { items } = await page.getTextContent()
         const words = items.flatMap((item) => ('str' in item ? [item.str] : []))
         const { width, height } = page.getViewport({ scale: 1 })
-        return { text: plain(words.join(' ')), width, height }
+        const ends = items.flatMap((item) => ('str' in item ? [Number(item.transform[4]) + item.width] : []))
+        return { text: plain(words.join(' ')), width, height, rightmost: Math.max(...ends) }
       }),
     )
   } finally {
