@@ -24,6 +24,8 @@ export function symmetricEigenWork(size: number): SymmetricEigenWork {
 
 /** More rounds than this for one eigenvalue never happen with finite numbers. */
 const MOST_ROUNDS = 60
+/** Less than this is nothing: squares of smaller numbers lose digits or vanish. */
+const NOTHING = 1e-130
 
 /**
  * Solves A x = lambda x. `work.diagonal` receives the eigenvalues in rising order and
@@ -46,7 +48,7 @@ function tridiagonalise({ size: n, diagonal: d, beside: e, vectors: v }: Symmetr
     let magnitude = 0
     let h = 0
     for (let k = 0; k < i; k++) magnitude += Math.abs(d[k]!)
-    if (magnitude === 0) {
+    if (magnitude < NOTHING) {
       e[i] = d[i - 1]!
       for (let j = 0; j < i; j++) {
         d[j] = v[(i - 1) * n + j]!
@@ -127,10 +129,11 @@ function implicitQl({ size: n, diagonal: d, beside: e, vectors: v }: SymmetricEi
   let largest = 0
   for (let l = 0; l < n; l++) {
     largest = Math.max(largest, Math.abs(d[l]!) + Math.abs(e[l]!))
+    const least = Math.max(NOTHING, Number.EPSILON * largest)
     let m = l
-    while (m < n - 1 && Math.abs(e[m]!) > Number.EPSILON * largest) m++
+    while (m < n - 1 && Math.abs(e[m]!) > least) m++
     let rounds = 0
-    while (m > l && Math.abs(e[l]!) > Number.EPSILON * largest) {
+    while (m > l && Math.abs(e[l]!) > least) {
       if (++rounds > MOST_ROUNDS) return false
       let g = d[l]!
       let p = (d[l + 1]! - g) / (2 * e[l]!)
