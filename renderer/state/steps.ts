@@ -50,8 +50,8 @@ function responseState(evaluation: Evaluation | null, machine: StepState, mounts
   }
   const open = [machine.state !== 'done' && 'the machine', mounts.state !== 'done' && 'the mounts']
   const names = open.filter((name) => name !== false)
-  if (names.length === 2) return { state: 'empty', missing: 'waits for machine and mounts' }
-  return names.length === 1 ? incomplete(`waits for ${names[0]}`) : incomplete('nothing excites the machine')
+  if (names.length > 0) return { state: 'empty', missing: `waits for ${names.join(' and ')}` }
+  return incomplete('nothing excites the machine')
 }
 
 function absorberState(

@@ -78,6 +78,7 @@ export function partColumns(): Column<MachinePart>[] {
       key: 'axis',
       title: 'Axis',
       hint: 'Axis of the cylinder',
+      width: '3.75rem',
       group: 'Cylinder',
       path: 'axis',
       options: AXES.map((axis) => ({ value: axis, label: axis })),

@@ -71,6 +71,7 @@ export function mountColumns(
       key: 'tilt',
       title: 'about',
       hint: 'Tilted about',
+      width: '5.25rem',
       group: 'Tilt',
       path: 'tilt',
       options: [
