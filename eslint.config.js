@@ -7,6 +7,7 @@ const CORE_LAYERS = [
   'units',
   'project',
   'numerics',
+  'components',
   'network',
   'excitation',
   'mounts',

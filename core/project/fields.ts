@@ -2,6 +2,7 @@ import { z } from 'zod'
 import { InputError } from '../errors.ts'
 import { DIMENSIONS, type Dimension } from '../units/dimensions.ts'
 import { parseQuantity } from '../units/parse.ts'
+import { parseTemperature } from '../units/temperature.ts'
 
 export type Vec3 = [x: number, y: number, z: number]
 
@@ -38,6 +39,21 @@ export function optionalQuantity(dimension: Dimension, meaning: string, limits: 
     .meta({ description: meaning, unit: unit === '' ? 'pure number' : unit })
 }
 
+/** A temperature in a project file: a number in °C, or text such as "35 °C" or "95 degF". Kept in °C. */
+export function temperature(meaning: string) {
+  const read = (text: string, context: z.RefinementCtx) => {
+    try {
+      return parseTemperature(text)
+    } catch (error) {
+      return refuse(error, text, context)
+    }
+  }
+  return z.union([z.number().min(-273.15).max(5000), z.string().transform(read)]).meta({
+    description: meaning,
+    unit: '°C',
+  })
+}
+
 export function vector(dimension: Dimension, meaning: string, limits: Limits = {}) {
   const part = (axis: string) => quantity(dimension, `${axis} component`, limits)
   return z.tuple([part('x'), part('y'), part('z')]).meta({ description: meaning })
@@ -69,10 +85,14 @@ function fromText(text: string, dimension: Dimension, context: z.RefinementCtx):
   try {
     return parseQuantity(text, dimension)
   } catch (error) {
-    const message = error instanceof InputError ? error.allowed : 'not a quantity'
-    context.addIssue({ code: 'custom', message, input: text })
-    return z.NEVER
+    return refuse(error, text, context)
   }
+}
+
+function refuse(error: unknown, text: string, context: z.RefinementCtx): never {
+  const message = error instanceof InputError ? error.allowed : 'not a quantity'
+  context.addIssue({ code: 'custom', message, input: text })
+  return z.NEVER
 }
 
 function outside(value: number, limits: Limits, unit: string): string | null {
