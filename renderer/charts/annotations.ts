@@ -103,19 +103,23 @@ function limitsOf(
       borderColor: plain ? palette.soft : palette.danger,
       borderWidth: plain ? 1 : 1.5,
       borderDash: plain ? [6, 3] : [],
-      label: {
-        display: limit.label !== '' && row !== null,
-        content: limit.label,
-        position: wide ? (PLACES[row ?? 0] ?? 'start') : 'center',
-        color: plain ? palette.soft : palette.danger,
-        backgroundColor: 'transparent',
-        textStrokeColor: palette.paper,
-        textStrokeWidth: 3,
-        font: { size: FONT_SIZE, family: palette.font, weight: plain ? 400 : 600 },
-        padding: { x: 4, y: 1 },
-        xAdjust: wide && row === 1 ? -4 : 4,
-        yAdjust: limit.forbidden === 'below' ? -9 : 9,
-      },
+    }
+    if (limit.label === '' || row === null) continue
+    const at = wide ? (PLACES[row] ?? 'start') : 'center'
+    made[`name-${limit.id}`] = {
+      type: 'label',
+      xValue: at === 'start' ? ends.xMin : at === 'end' ? ends.xMax : middle(ends, model.x),
+      yValue: y,
+      position: { x: at, y: 'center' },
+      content: limit.label,
+      color: plain ? palette.soft : palette.danger,
+      backgroundColor: 'transparent',
+      textStrokeColor: palette.paper,
+      textStrokeWidth: 3,
+      font: { size: FONT_SIZE, family: palette.font, weight: plain ? 400 : 600 },
+      padding: 0,
+      xAdjust: at === 'start' ? 6 : at === 'end' ? -6 : 0,
+      yAdjust: limit.forbidden === 'below' ? -9 : 9,
     }
   }
   return made
@@ -185,6 +189,10 @@ function marksOf(
       ]
     }),
   )
+}
+
+function middle(ends: { readonly xMin: number; readonly xMax: number }, axis: DrawnAxis): number {
+  return axis.kind === 'log' ? Math.sqrt(ends.xMin * ends.xMax) : (ends.xMin + ends.xMax) / 2
 }
 
 function share(at: number, { min, max, kind }: DrawnAxis): number {

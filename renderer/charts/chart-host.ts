@@ -17,7 +17,8 @@ export interface PlotArea {
 export interface ChartHost {
   /** Draws the model; options are made anew only when `structure` or the palette differ. */
   update(model: DrawModel, marking: Marking, palette: Palette, structure: string): void
-  zoomBy(factor: number): void
+  /** @param x, y what stays in place [CSS px]; left out: the middle */
+  zoomBy(factor: number, focus?: { readonly x: number; readonly y: number }): void
   panBy(pixels: number): void
   readonly canvas: HTMLCanvasElement
   destroy(): void
@@ -94,7 +95,8 @@ export function createChartHost(canvas: HTMLCanvasElement, callbacks: Callbacks)
 
   return {
     update,
-    zoomBy: (factor) => chart?.zoom(factor),
+    zoomBy: (factor, focus) =>
+      chart?.zoom({ x: factor, y: factor, ...(focus ? { focalPoint: { ...focus } } : {}) }),
     panBy: (pixels) => chart?.pan({ x: pixels }, undefined, 'none'),
     canvas,
     destroy: () => {

@@ -25,11 +25,15 @@ export function followPointer(
   const up = () => {
     active = false
   }
+  // a press on a canvas would take the focus from what `start` has just given it to
+  const keepFocus = (event: MouseEvent) => event.preventDefault()
+  element.addEventListener('mousedown', keepFocus)
   element.addEventListener('pointerdown', down)
   element.addEventListener('pointermove', moved)
   element.addEventListener('pointerup', up)
   element.addEventListener('pointercancel', up)
   return () => {
+    element.removeEventListener('mousedown', keepFocus)
     element.removeEventListener('pointerdown', down)
     element.removeEventListener('pointermove', moved)
     element.removeEventListener('pointerup', up)

@@ -8,6 +8,9 @@ export function pinnedCurves(chart: string): readonly ChartSeries[] {
   return pinned.get(chart) ?? []
 }
 
+/** Pinned curves take the other half of the dash patterns, so that they differ by more than ink. */
+const PINNED_DASH = 4
+
 /** Keeps copies of the curves as they stand now. */
 export function pinCurves(chart: string, series: readonly ChartSeries[]): void {
   pinned.set(
@@ -17,6 +20,7 @@ export function pinCurves(chart: string, series: readonly ChartSeries[]): void {
       id: `pinned-${entry.id}`,
       label: `${entry.label}, pinned`,
       role: 'pinned' as const,
+      dash: entry.dash + PINNED_DASH,
       x: entry.x.slice(),
       y: entry.y.slice(),
     })),

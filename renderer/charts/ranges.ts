@@ -7,6 +7,8 @@ export interface AxisRange {
 
 /** More decades than this flatten what matters; deeper notches run off the bottom. */
 const MOST_DECADES = 4
+/** How far below the lowest tenth of the values the axis goes: the run to standstill may leave it. */
+const TAIL = 0.5
 /** A spike this far above nearly all of the curve (an undamped resonance) runs off the top. */
 const SPIKE_DECADES = 2.5
 
@@ -49,11 +51,13 @@ export function valueRange(
   }
   if (scale === 'dB') {
     const top = Math.max(Math.min(quantile(1), quantile(0.9) + 20 * SPIKE_DECADES), highestKept)
-    const bottom = Math.min(Math.max(quantile(0.02), top - 20 * MOST_DECADES), lowestKept)
+    const floor = Math.max(quantile(0.02), quantile(0.1) - 20 * TAIL, top - 20 * MOST_DECADES)
+    const bottom = Math.min(floor, lowestKept)
     return { min: Math.floor(bottom / 10) * 10, max: Math.ceil((top + 1) / 10) * 10 }
   }
   const top = Math.max(Math.min(quantile(1), quantile(0.9) * 10 ** SPIKE_DECADES), highestKept)
-  const bottom = Math.min(Math.max(quantile(0.02), top * 10 ** -MOST_DECADES), lowestKept)
+  const floor = Math.max(quantile(0.02), quantile(0.1) / 10 ** TAIL, top / 10 ** MOST_DECADES)
+  const bottom = Math.min(floor, lowestKept)
   return { min: roundDown(bottom), max: roundUp(top * 1.02) }
 }
 

@@ -41,8 +41,11 @@ function corners(project: Project): readonly Attachment[] {
   const { massProperties } = project.machine
   if (massProperties.from !== 'parts' || massProperties.parts.length === 0) return []
   const boxes = massProperties.parts.map((part) => ({ centre: part.centre, half: halfSize(part) }))
-  const end = (axis: 0 | 1 | 2, sign: 1 | -1) =>
-    sign * Math.max(...boxes.map(({ centre, half }) => sign * centre[axis] + half[axis]))
+  // twelve digits: sums of halves leave noise that a field would show
+  const end = (axis: 0 | 1 | 2, sign: 1 | -1) => {
+    const outermost = Math.max(...boxes.map(({ centre, half }) => sign * centre[axis] + half[axis]))
+    return Number((sign * outermost).toPrecision(12))
+  }
   const signs = [-1, 1] as const
   return signs.flatMap((sx) =>
     signs.map((sy) => ({
