@@ -104,9 +104,14 @@ function columnWidths(table: ReportTable): (string | number)[] {
   )
 }
 
-/** A word without a blank must still find its line's end. */
-export function breakable(text: string): string {
-  return text.replace(/[^\s]{28}(?=[^\s]{4})/g, '$&\u200b')
+/** A word longer than this finds its line's end anywhere; ordinary words stay whole. */
+const LONGEST_WORD = 24
+
+/** Text in which overlong words may be broken after every `piece` characters. */
+export function breakable(text: string, piece = 14): string {
+  return text.replace(/\S+/g, (word) =>
+    word.length <= LONGEST_WORD ? word : word.replace(new RegExp(`(.{${piece}})(?=.)`, 'gu'), '$1\u200b'),
+  )
 }
 
 interface CellLook {

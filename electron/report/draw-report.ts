@@ -130,7 +130,7 @@ function titleBlock(report: Report): Content {
           {
             stack: [
               { text: 'Calculation report', color: INK_SOFT },
-              { text: breakable(report.title), style: 'title', margin: [0, 4, 0, 4] },
+              { text: breakable(report.title, 8), style: 'title', margin: [0, 4, 0, 4] },
               { text: 'Mounting and absorbers of a machine', color: INK_SOFT },
             ],
           },

@@ -29,6 +29,9 @@ export function figureSection(project: Project, evaluation: Evaluation, writer: 
   }
 }
 
+/** Lines for the modes; beyond this those of the highest orders are left out. */
+const MOST_MARKS = 24
+
 /** What all charts against shaft speed share. */
 interface SpeedFrame {
   readonly x: Figure['x']
@@ -187,15 +190,16 @@ function speedFrame(
   const running = project.machine.duty.runningSpeed
   const range = operatingRange(project)
   const modes = evaluation.modesWithAbsorbers ?? evaluation.modes ?? []
-  const crossings = modes.flatMap((mode) =>
-    mode.crossings
-      .filter(({ speed }) => speed >= first && speed <= last)
-      .map(({ order, speed }): FigureMark => ({
-        at: shown(speed),
-        label: order === 1 ? String(mode.number) : `${mode.number}·${writer.number(order, 'ratio')}×`,
-        kind: 'mode',
-      })),
-  )
+  const crossings = modes
+    .flatMap((mode) => mode.crossings.map((crossing) => ({ ...crossing, mode: mode.number })))
+    .filter(({ speed }) => speed >= first && speed <= last)
+    .sort((a, b) => a.order - b.order)
+    .slice(0, MOST_MARKS)
+    .map(({ order, speed, mode }): FigureMark => ({
+      at: shown(speed),
+      label: order === 1 ? String(mode) : `${mode}·${writer.number(order, 'ratio')}×`,
+      kind: 'mode',
+    }))
   return {
     x: { label: 'Shaft speed', unit: writer.unit('shaftSpeed'), scale: 'linear' },
     marks: [

@@ -9,12 +9,12 @@ export function modeBlocks(evaluation: Evaluation, writer: Writer): readonly Blo
   if (modes === null) return [{ kind: 'paragraph', text: 'The natural modes are not known.' }]
   const blocks: Block[] = [
     writeTable(modeTable('Natural modes of the machine on its mounts', modes), writer),
-    crossingTable('Speeds at which the orders meet the modes', modes, writer),
+    ...crossingTables('Speeds at which the orders meet the modes', modes, writer),
   ]
   if (modesWithAbsorbers !== null) {
     blocks.push(
       writeTable(modeTable('Natural modes with the absorbers in place', modesWithAbsorbers), writer),
-      crossingTable(
+      ...crossingTables(
         'Speeds at which the orders meet the modes, absorbers in place',
         modesWithAbsorbers,
         writer,
@@ -54,24 +54,35 @@ function asRounded(share: number): number {
   return Math.abs(share) < 1e-9 ? 0 : share
 }
 
-function crossingTable(caption: string, modes: readonly Mode[], writer: Writer): Block {
+/** More orders than this have a table of their own. */
+const ORDERS_ABREAST = 8
+
+function crossingTables(caption: string, modes: readonly Mode[], writer: Writer): readonly Block[] {
   const orders = [...new Set(modes.flatMap((mode) => mode.crossings.map((crossing) => crossing.order)))].sort(
     (a, b) => a - b,
   )
-  if (orders.length === 0)
-    return { kind: 'paragraph', text: 'Nothing excites the machine: no order meets a mode.' }
-  const table: RawTable = {
-    caption,
-    columns: [
-      column('No.', 'ratio'),
-      textColumn('Motion'),
-      ...orders.map((order) => column(`Order ${writer.number(order, 'ratio')}`, 'shaftSpeed')),
-    ],
-    rows: modes.map((mode): readonly Cell[] => [
-      mode.number,
-      mode.name,
-      ...orders.map((order) => mode.crossings.find((crossing) => crossing.order === order)?.speed ?? null),
-    ]),
+  if (orders.length === 0) {
+    return [{ kind: 'paragraph', text: 'Nothing excites the machine: no order meets a mode.' }]
   }
-  return writeTable(table, writer)
+  const groups = Array.from({ length: Math.ceil(orders.length / ORDERS_ABREAST) }, (_, index) =>
+    orders.slice(index * ORDERS_ABREAST, (index + 1) * ORDERS_ABREAST),
+  )
+  return groups.map((group) =>
+    writeTable(
+      {
+        caption,
+        columns: [
+          column('No.', 'ratio'),
+          textColumn('Motion'),
+          ...group.map((order) => column(`Order ${writer.number(order, 'ratio')}`, 'shaftSpeed')),
+        ],
+        rows: modes.map((mode): readonly Cell[] => [
+          mode.number,
+          mode.name,
+          ...group.map((order) => mode.crossings.find((crossing) => crossing.order === order)?.speed ?? null),
+        ]),
+      },
+      writer,
+    ),
+  )
 }

@@ -94,8 +94,10 @@ function strokeBlocks(project: Project, speeds: readonly SpeedResponse[], writer
   if (inPlace.length === 0) return []
   const table: RawTable = {
     caption: 'Travel of the absorbers against the machine, zero to peak',
-    columns: [column('Speed', 'shaftSpeed'), ...inPlace.map((name) => column(name, 'deflection'))],
-    rows: speeds.map((at): readonly Cell[] => [at.speed, ...at.strokes]),
+    columns: [column('Speed', 'shaftSpeed'), textColumn('Absorber'), column('Travel', 'deflection')],
+    rows: speeds.flatMap((at) =>
+      inPlace.map((name, index): readonly Cell[] => [at.speed, name, at.strokes[index] ?? null]),
+    ),
   }
   return [writeTable(table, writer)]
 }
