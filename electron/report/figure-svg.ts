@@ -240,24 +240,22 @@ const rank = (mark: FigureMark) => (mark.kind === 'running' ? 0 : 1)
 /** Labels of vertical marks in as many rows as keep them apart. */
 function markRows(figure: Figure, width: number): { rows: number; places: readonly MarkPlace[] } {
   const scale = xScale(figure)
-  const ends: number[] = []
+  const rows: (readonly [from: number, to: number])[][] = []
   const order = figure.marks
     .map((mark, index) => ({ mark, index }))
     .sort((a, b) => rank(a.mark) - rank(b.mark) || a.mark.at - b.mark.at)
-  const places: MarkPlace[] = figure.marks.map(() => ({ row: 0 }))
+  const places: MarkPlace[] = figure.marks.map(() => ({ row: null }))
   for (const { mark, index } of order) {
     const at = (width - 56) * scale.place(mark.at)
     const half = 2.2 * mark.label.length + 2
-    let row = ends.findIndex((end) => end < at - half)
-    if (row < 0) row = ends.length
-    if (row >= MOST_ROWS) {
-      places[index] = { row: null }
-      continue
-    }
-    ends[row] = at + half
+    const free = rows.findIndex((taken) => taken.every(([from, to]) => at + half < from || at - half > to))
+    const row = free < 0 ? rows.length : free
+    if (row >= MOST_ROWS) continue
+    const taken = rows[row] ?? []
+    rows[row] = [...taken, [at - half, at + half]]
     places[index] = { row }
   }
-  return { rows: Math.max(1, ends.length), places }
+  return { rows: Math.max(1, rows.length), places }
 }
 
 function markLines(figure: Figure, plot: Plot, places: readonly MarkPlace[]): string {

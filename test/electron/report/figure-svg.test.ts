@@ -64,6 +64,22 @@ describe('a figure as a vector drawing', () => {
     expect(heights[0]).not.toBe(heights[1])
   })
 
+  it('leaves out only labels for which three rows have no room, and never that of the running speed', () => {
+    const crowd = Array.from({ length: 8 }, (_, index) => ({
+      at: 1445 + index,
+      label: `m${index}`,
+      kind: 'mode' as const,
+    }))
+    const alone = { at: 200, label: 'alone', kind: 'mode' as const }
+    const crowded = figureSvg({ ...figure, marks: [...crowd, alone, ...figure.marks] }, SIZE)
+    const shown = (label: string) => crowded.includes(`>${label}</text>`)
+    expect([shown('running'), shown('alone'), shown('1'), shown('2')]).toEqual([true, true, true, true])
+    expect(crowd.filter(({ label }) => shown(label))).toHaveLength(2) // the rows that the running speed leaves
+    expect(/y="([\d.]+)"[^>]*>alone</.exec(crowded)?.[1]).toBe(
+      /y="([\d.]+)"[^>]*>running</.exec(crowded)?.[1],
+    )
+  })
+
   it('hatches the side that is not allowed', () => {
     const strokes = /<path d="(M[^"]*)" fill="none" stroke="[^"]*" stroke-width="0.6"\/>/.exec(svg)?.[1] ?? ''
     const pairs = [...strokes.matchAll(/M([\d.]+) ([\d.]+)L([\d.]+) ([\d.]+)/g)]
