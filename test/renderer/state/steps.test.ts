@@ -1,0 +1,110 @@
+import { describe, expect, it } from 'vitest'
+import { evaluate } from '../../../core/evaluate.ts'
+import { blankProject } from '../../../core/project/create.ts'
+import type { Project } from '../../../core/project/project.ts'
+import { addMount } from '../../../renderer/pages/mounts/mount-edits.ts'
+import { projectFileName, projectFileText } from '../../../renderer/state/project-file.ts'
+import { readProjectText } from '../../../core/project/read.ts'
+import { addressOf, readAddress, stepOfField } from '../../../renderer/state/route.svelte.ts'
+import { stepStates } from '../../../renderer/state/steps.ts'
+
+function machine(project: Project): void {
+  project.machine.massProperties = {
+    from: 'typed',
+    mass: 600,
+    centreOfGravity: [0, 0, 0.3],
+    inertia: { xx: 50, yy: 90, zz: 104, xy: 0, xz: 0, yz: 0 },
+  }
+  project.machine.duty.runningSpeed = 150
+  project.sources.push({
+    kind: 'unbalance',
+    id: 's',
+    name: '',
+    enabled: true,
+    position: null,
+    phase: 0,
+    amount: { by: 'unbalance', unbalance: 0.01 },
+  })
+}
+
+const states = (project: Project) => stepStates(project, evaluate(project))
+
+describe('the path', () => {
+  it('begins with nothing started', () => {
+    const path = states(blankProject('x'))
+    expect(Object.values(path).map((step) => step.state)).toEqual([
+      'empty',
+      'empty',
+      'empty',
+      'empty',
+      'empty',
+    ])
+  })
+
+  it('says what a half-described machine lacks', () => {
+    const project = blankProject('x')
+    machine(project)
+    project.machine.duty.runningSpeed = null
+    const path = states(project)
+    expect(path.machine.state).toBe('incomplete')
+    expect(path.machine.missing).not.toBe('')
+    expect(path.response.missing).toContain('machine')
+  })
+
+  it('is done step by step', () => {
+    const project = blankProject('x')
+    machine(project)
+    expect(states(project).machine).toEqual({ state: 'done', missing: '' })
+    for (const [x, y] of [
+      [-0.5, -0.3],
+      [-0.5, 0.3],
+      [0.5, -0.3],
+      [0.5, 0.3],
+    ] as const) {
+      addMount(project, evaluate(project), [x, y, 0])
+    }
+    const path = states(project)
+    expect(path.mounts.state).toBe('done')
+    expect(path.response.state).toBe('done')
+    expect(path.report).toEqual({ state: 'incomplete', missing: 'no requirement to judge by' })
+  })
+
+  it('says when the mounts leave the machine free', () => {
+    const project = blankProject('x')
+    machine(project)
+    addMount(project, null, [0, 0, 0])
+    expect(states(project).mounts.state).toBe('incomplete')
+  })
+})
+
+describe('addresses', () => {
+  const id = '11111111-2222-4333-8444-555555555555'
+
+  it('lead back to project and step, and anything else to the Shelf', () => {
+    expect(readAddress(addressOf(id, 'mounts'))).toEqual({ id, step: 'mounts' })
+    expect(readAddress(`#/project/${id}`)).toEqual({ id, step: 'machine' })
+    expect(readAddress(addressOf(null, 'mounts'))).toBeNull()
+    expect(readAddress('#/project/../etc')).toBeNull()
+  })
+
+  it('know on which step a field is edited', () => {
+    expect(stepOfField('mounting.placed[2].position')).toBe('mounts')
+    expect(stepOfField('absorbers[0].host')).toBe('absorber')
+    expect(stepOfField('machine.massProperties.mass')).toBe('machine')
+  })
+})
+
+describe('project files', () => {
+  it('are read back to the last digit', () => {
+    const project = blankProject('x')
+    machine(project)
+    project.machine.duty.runningSpeed = 154.98523713917
+    expect(readProjectText(projectFileText(project))).toEqual(project)
+  })
+
+  it('get a name that every file system takes', () => {
+    expect(projectFileName('Kiln fan / mezzanine: “A”')).toBe('Kiln-fan-mezzanine-A.stillbed.json')
+    expect(projectFileName('..')).toBe('project.stillbed.json')
+    expect(projectFileName('Glasur­mühle Nº 2')).toBe('Glasurmuhle-No-2.stillbed.json')
+  })
+})
