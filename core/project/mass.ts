@@ -55,10 +55,15 @@ function invalid(field: string, message: string): Problem {
 function tensorOf({ xx, yy, zz, xy, xz, yz }: Inertia): Tensor | null {
   if (xx === null || yy === null || zz === null) return null
   return [
-    [xx, -xy, -xz],
-    [-xy, yy, -yz],
-    [-xz, -yz, zz],
+    [xx, minus(xy), minus(xz)],
+    [minus(xy), yy, minus(yz)],
+    [minus(xz), minus(yz), zz],
   ]
+}
+
+/** Plain zero stays plain. */
+function minus(value: number): number {
+  return 0 - value
 }
 
 /**
