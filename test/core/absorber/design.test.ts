@@ -64,6 +64,21 @@ describe('an absorber design', () => {
     expect(result.peakWithout).toBeCloseTo(1 / (2 * 0.02 * Math.sqrt(1 - 0.0004)), 10)
   })
 
+  it('detunes the spring alone: the damper and the mass stay', () => {
+    const { result } = designAbsorber(absorber(), 0, NOTHING)
+    if (result === null) throw new Error('no result')
+    for (const { share, peak } of result.detuning) {
+      const tuning = {
+        by: 'given',
+        frequency: result.frequency * (1 + share),
+        dampingRatio: result.dampingRatio / (1 + share),
+      }
+      const off = designAbsorber(absorber({ tuning }), 0, NOTHING).result
+      expect(off?.damping).toBeCloseTo(result.damping, 8)
+      expect(off?.peak).toBeCloseTo(peak ?? NaN, 10)
+    }
+  })
+
   it('draws curves whose highest points are the peaks', () => {
     const { result } = designAbsorber(absorber(), 0, NOTHING)
     if (result === null) throw new Error('no result')
@@ -151,6 +166,27 @@ describe('a mode as host', () => {
     // and along a slanted line by its share
     const slanted = designAbsorber(onMode(3, [1, 2, 0.5], [1, 0, 1]), 0, MACHINE)
     expect(slanted.result?.host.mass).toBeCloseTo(50, 9)
+  })
+
+  it('moves as a rigid body does: translation and rotation add with their signs', () => {
+    const shape: Vec6 = [0.03, 0.02, 0.05, 0.1, -0.08, 0.06]
+    const context = { ...MACHINE, modes: [mode(1, 5, shape)] }
+    const r = [0.4, -0.5, 0.9] as const
+    // u + theta x r, component by component
+    const at = [
+      0.03 + -0.08 * r[2] - 0.06 * r[1],
+      0.02 + 0.06 * r[0] - 0.1 * r[2],
+      0.05 + 0.1 * r[1] - -0.08 * r[0],
+    ]
+    const position = [1 + r[0], r[1], 0.5 + r[2]]
+    ;[
+      [1, 0, 0],
+      [0, 1, 0],
+      [0, 0, 1],
+    ].forEach((direction, axis) => {
+      const { result } = designAbsorber(onMode(1, position, direction), 0, context)
+      expect((result?.host.mass ?? NaN) * (at[axis] ?? NaN) ** 2).toBeCloseTo(1, 12)
+    })
   })
 
   it('does not exist', () => {
