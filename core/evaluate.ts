@@ -1,21 +1,26 @@
 import { designAbsorber, type AbsorberContext } from './absorber/design.ts'
 import { isBounded, responseAtSpeeds } from './excitation/at-speeds.ts'
 import { describeSource } from './excitation/describe.ts'
-import { groupByOrder, sourceLoad, type SourceLoad } from './excitation/order-loads.ts'
+import { groupByOrder, type SourceLoad } from './excitation/order-loads.ts'
+import { knownLoads, ordersOf } from './excitation/project-loads.ts'
 import type { Observed } from './excitation/observed.ts'
 import { sweepResponse } from './excitation/sweep.ts'
 import { install, type Installation } from './mounts/installation.ts'
-import { MACHINE, type PlacedAbsorber } from './mounts/machine-network.ts'
+import { MACHINE } from './mounts/machine-network.ts'
+import { placedAbsorbers } from './mounts/placed-absorbers.ts'
 import { chartRange, sweepSpeeds } from './mounts/speeds.ts'
 import { pointReceptance } from './network/receptance.ts'
 import { summariseMass } from './project/mass.ts'
 import type { Project } from './project/project.ts'
+import { judgedOf } from './runup/judged.ts'
+import { runUpOf } from './runup/run-up.ts'
 import type {
   AbsorberResult,
   Evaluation,
   MassSummary,
   Problem,
   ResponseResult,
+  RunUpResult,
   SpeedResponse,
 } from './results.ts'
 import { judge, type Computed } from './verdict/judge.ts'
@@ -62,7 +67,9 @@ function compute(project: Project, scope: Scope): Computed {
     summary === null || placed.length === 0 || bare === null || bare.modes === null
       ? null
       : install(project, summary, placed, orders)
-  const response = respondTo(project, summary, bare, full, scope, problems)
+  const loads = knownLoads(project, summary?.centreOfGravity ?? [0, 0, 0], problems)
+  const response = respondTo(project, loads, bare, full, scope, problems)
+  const runUp = runUpIn(project, loads, (full ?? bare)?.observed ?? null, scope, problems)
   return {
     problems,
     massSummary: summary,
@@ -71,23 +78,9 @@ function compute(project: Project, scope: Scope): Computed {
     modes: bare?.modes ?? null,
     modesWithAbsorbers: full?.modes ?? null,
     response,
+    runUp,
     absorbers,
   }
-}
-
-/** Orders of the exciting forces and of the requirements; the shaft's own where there are none. */
-function ordersOf(project: Project): readonly number[] {
-  const orders = new Set<number>()
-  for (const source of project.sources) {
-    if (source.enabled) orders.add(source.kind === 'unbalance' ? 1 : source.order)
-  }
-  for (const requirement of project.requirements) {
-    if (requirement.enabled && requirement.kind === 'modeSeparation') {
-      for (const order of requirement.orders) orders.add(order)
-    }
-  }
-  if (orders.size === 0) orders.add(1)
-  return [...orders].toSorted((a, b) => a - b)
 }
 
 function dutyProblems(project: Project): readonly Problem[] {
@@ -151,47 +144,14 @@ function designAbsorbers(
   })
 }
 
-function placedAbsorbers(project: Project, results: readonly AbsorberResult[]): readonly PlacedAbsorber[] {
-  return project.absorbers.flatMap(({ id, enabled, host }) => {
-    const result = results.find((candidate) => candidate.id === id)
-    if (!enabled || host.kind !== 'mode' || !result) return []
-    const { mass, stiffness, damping } = result
-    return [{ id, mass, stiffness, damping, position: host.position, direction: host.direction }]
-  })
-}
-
-/** Loads of all enabled sources; null, with the reasons, when there is none or one is not known. */
-function knownLoads(
-  project: Project,
-  summary: MassSummary | null,
-  problems: Problem[],
-): readonly SourceLoad[] | null {
-  const active = project.sources.flatMap((source, index) => (source.enabled ? [{ source, index }] : []))
-  if (active.length === 0) {
-    problems.push({
-      field: 'sources',
-      message: 'Nothing excites the machine yet: add an exciting force.',
-      kind: 'missing',
-    })
-    return null
-  }
-  const amounts = active.map(({ source, index }) =>
-    sourceLoad(source, project.machine, summary?.centreOfGravity ?? [0, 0, 0], `sources[${index}]`),
-  )
-  problems.push(...amounts.flatMap((amount) => amount.problems))
-  const loads = amounts.flatMap(({ load }) => (load === null ? [] : [load]))
-  return loads.length === amounts.length ? loads : null
-}
-
 function respondTo(
   project: Project,
-  summary: MassSummary | null,
+  loads: readonly SourceLoad[] | null,
   bare: Installation | null,
   full: Installation | null,
   scope: Scope,
   problems: Problem[],
 ): ResponseResult | null {
-  const loads = knownLoads(project, summary, problems)
   const observed = (full ?? bare)?.observed ?? null
   if (loads === null || observed === null) return null
   const modes = [...(bare?.modes ?? []), ...(full?.modes ?? [])]
@@ -209,6 +169,22 @@ function respondTo(
     sweepWithoutAbsorbers: without === null ? null : sweepResponse(without, orders, speeds),
     runningWithoutAbsorbers: runningWithout && isBounded(runningWithout) ? runningWithout : null,
   }
+}
+
+/** Run-up and coast-down where they are switched on; in a trial only as far as requirements judge them. */
+function runUpIn(
+  project: Project,
+  loads: readonly SourceLoad[] | null,
+  observed: Observed | null,
+  scope: Scope,
+  problems: Problem[],
+): RunUpResult | null {
+  if (!project.runUp.enabled || loads === null || observed === null) return null
+  const wanted = scope.whole ? {} : judgedOf(project)
+  if (wanted === null) return null
+  const { result, problems: found } = runUpOf(project, observed, loads, wanted)
+  problems.push(...found)
+  return result
 }
 
 /**

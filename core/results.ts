@@ -48,6 +48,57 @@ export interface MountStatics {
   readonly ratedShare: number | null
   /** deflection as a share of the mount's own limit; null where none is given */
   readonly limitShare: number | null
+  /** packing under the mount: as built, or as levelling asks for [m] */
+  readonly shim: number
+  /** load that levelling aims at [N]; null as built */
+  readonly wishedLoad: number | null
+  /** along the mount's own axis where it stands [N/m] */
+  readonly staticStiffness: number
+  /** stiffness of vibration along the local axes where it stands [N/m] */
+  readonly dynamicStiffness: Vec3
+  /** frequency that the static deflection alone suggests, √(g/δ) / 2π [Hz]; null when not pressed */
+  readonly frequencyByDeflection: number | null
+  /** frequency of the mount's load on its stiffness of vibration [Hz]; null when it carries none */
+  readonly frequencyOnLoad: number | null
+  /** whether the deflection lies beyond the points of the mount's curve */
+  readonly beyondLaw: boolean
+}
+
+/** The machine under an equivalent static lateral load, all against its rest position. */
+export interface LateralCase {
+  /** unit vector of the load, machine axes */
+  readonly direction: Vec3
+  readonly bodyDisplacement: Vec6
+  readonly mounts: readonly {
+    readonly id: string
+    /** compression carried along machine z, weight included [N] */
+    readonly load: number
+    /** of the mount on the machine, machine axes, weight included [N] */
+    readonly force: Vec3
+    /** tension that the mount or a restraint must hold [N]; 0 while it is pressed */
+    readonly uplift: number
+    /** horizontal way of the mount's top [m] */
+    readonly sway: number
+    /** sway over the free way to the snubber; null where none is given */
+    readonly gapShare: number | null
+    /** load as a share of the rated load; null where no rating is given */
+    readonly ratedShare: number | null
+  }[]
+  readonly largestLoad: number
+  readonly largestUplift: number
+  readonly largestSway: number
+  readonly largestGapShare: number | null
+}
+
+export interface LateralStatics {
+  /** load over weight */
+  readonly factor: number
+  /** [N] */
+  readonly load: number
+  /** along the given direction and against it; null where the machine does not stand */
+  readonly cases: readonly [LateralCase | null, LateralCase | null]
+  /** to be shown wherever these figures are shown */
+  readonly caution: string
 }
 
 export interface Statics {
@@ -64,6 +115,11 @@ export interface Statics {
   readonly loadSumError: number
   /** point about which a vertical static force only sinks the machine (elastic centre) [m], or null */
   readonly elasticCentre: Vec3 | null
+  readonly setting: 'asBuilt' | 'levelled'
+  /** steps that curved mounts took to their balance; 0 where every mount is linear */
+  readonly iterations: number
+  /** null where no lateral load is asked for */
+  readonly lateral: LateralStatics | null
 }
 
 export interface Mode {
@@ -220,6 +276,75 @@ export interface AbsorberResult {
   } | null
 }
 
+/** A largest value while the speed changes, and the same in the steady state for comparison. */
+export interface RunUpPeak {
+  /** zero to peak, the highest that any shaft angle at the start would give; orders added up */
+  readonly value: number
+  /** since the start of the run-up or coast-down [s] */
+  readonly time: number
+  /** shaft speed at that time [rad/s] */
+  readonly speed: number
+  /** largest steady value over the same speeds; null where a resonance is not damped at all */
+  readonly steady: number | null
+  /** value over steady; null without it, or where nothing moves */
+  readonly ratio: number | null
+}
+
+/** Machine axes, and the peak of the resultant. */
+export interface RunUpPeaks {
+  readonly x: RunUpPeak
+  readonly y: RunUpPeak
+  readonly z: RunUpPeak
+  readonly resultant: RunUpPeak
+}
+
+/** Resultant displacement of the place that moves most, against time; thinned, peaks kept. */
+export interface RunUpEnvelope {
+  /** id of the point, or of the mount where no point is observed */
+  readonly place: string
+  readonly of: 'point' | 'mount'
+  /** [s], rising */
+  readonly time: Float64Array
+  /** [rad/s] */
+  readonly speed: Float64Array
+  /** [m] */
+  readonly displacement: Float64Array
+}
+
+/** One passage through the speeds. */
+export interface RunUpPass {
+  /** first and last speed [rad/s] */
+  readonly from: number
+  readonly to: number
+  /** time until the last speed is reached, and that at it which is still looked at [s] */
+  readonly duration: number
+  readonly hold: number
+  /** whether every peak has been found to the stated error */
+  readonly converged: boolean
+  /** what a peak may differ from the exact one, as a share of it */
+  readonly errorEstimate: number
+  /** displacement of each observed point [m] */
+  readonly points: readonly { readonly id: string; readonly peaks: RunUpPeaks }[]
+  readonly mounts: readonly {
+    readonly id: string
+    /** dynamic force on the support [N] */
+    readonly force: RunUpPeaks
+    /** displacement of its top against its foot [m] */
+    readonly travel: RunUpPeaks
+  }[]
+  /** resultant force into the support [N] */
+  readonly support: RunUpPeaks
+  /** travel of each enabled absorber's mass against its attachment [m] */
+  readonly absorbers: readonly { readonly id: string; readonly stroke: RunUpPeak }[]
+  /** null where only peaks were asked for */
+  readonly envelope: RunUpEnvelope | null
+}
+
+export interface RunUpResult {
+  readonly up: RunUpPass | null
+  readonly down: RunUpPass | null
+}
+
 export type VerdictStatus = 'pass' | 'near' | 'fail' | 'unknown'
 
 export interface Verdict {
@@ -260,6 +385,8 @@ export interface Evaluation {
   /** with every enabled absorber; null when there is none in place */
   readonly modesWithAbsorbers: readonly Mode[] | null
   readonly response: ResponseResult | null
+  /** null unless the project switches it on */
+  readonly runUp: RunUpResult | null
   readonly absorbers: readonly AbsorberResult[]
   readonly verdicts: readonly Verdict[]
 }

@@ -18,6 +18,8 @@ export interface ComplexVector {
 export interface SourceLoad {
   readonly order: number
   readonly law: 'constant' | 'squared'
+  /** the force of a mass carried by the shaft: while the speed changes it has a tangential part besides */
+  readonly inertial?: boolean
   readonly force: ComplexVector
   readonly moment: ComplexVector
 }
@@ -127,6 +129,7 @@ function unbalanceLoad(
   const load: SourceLoad = {
     order: 1,
     law: 'squared',
+    inertial: true,
     force,
     moment: momentOf(force, source.position ?? shaft.position, centre),
   }

@@ -10,6 +10,11 @@ const speeds = z.enum(['running', 'operating', 'chart']).default('running').meta
   description: 'judged at the running speed, over the operating range, or over every speed of the chart',
 })
 
+const during = z
+  .enum(['both', 'up', 'down'])
+  .default('both')
+  .meta({ description: 'judged during run-up, coast-down, or whichever of them is switched on' })
+
 export const SEVERITY_SCALES = ['iso10816-1', 'iso20816-3', 'iso14694', 'own'] as const
 
 export const requirementSchema = z.discriminatedUnion('kind', [
@@ -85,6 +90,28 @@ export const requirementSchema = z.discriminatedUnion('kind', [
       .default(null)
       .meta({ description: 'id of the absorber; empty: all of them' }),
     limit: optionalQuantity('deflection', "largest travel, zero to peak; empty: each absorber's own limit", {
+      above: 0,
+    }),
+  }),
+  z.strictObject({
+    ...common,
+    kind: z.literal('runUpMotion'),
+    place: z
+      .enum(['mounts', 'point'])
+      .default('mounts')
+      .meta({ description: 'displacement across the mounts, or of a point of the machine' }),
+    point: identifier.nullable().default(null).meta({ description: 'id of the point, with place "point"' }),
+    direction: z.enum(['resultant', 'x', 'y', 'z']).default('resultant'),
+    during,
+    limit: optionalQuantity('deflection', 'clearance: largest dynamic displacement, zero to peak', {
+      above: 0,
+    }),
+  }),
+  z.strictObject({
+    ...common,
+    kind: z.literal('runUpForce'),
+    during,
+    limit: optionalQuantity('force', 'largest dynamic force of one mount on its support, peak', {
       above: 0,
     }),
   }),

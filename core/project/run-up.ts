@@ -91,7 +91,10 @@ const hold = (seconds: number) =>
  */
 export const runUpSchema = z
   .strictObject({
-    enabled: z.boolean().default(false).meta({ description: 'false: run-up and coast-down are not computed' }),
+    enabled: z
+      .boolean()
+      .default(false)
+      .meta({ description: 'false: run-up and coast-down are not computed' }),
     up: z
       .strictObject({
         enabled: z.boolean().default(true).meta({ description: 'false: the run-up is left out' }),

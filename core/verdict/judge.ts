@@ -8,6 +8,7 @@ import {
   judgeTransmittedForce,
   judgeVelocity,
 } from './response-verdicts.ts'
+import { judgeRunUpForce, judgeRunUpMotion } from './run-up-verdicts.ts'
 import { judgeModeSeparation } from './separation-verdict.ts'
 import { judgeMountDeflection, judgeMountLoad } from './static-verdicts.ts'
 
@@ -39,6 +40,10 @@ function judgeOne(requirement: Requirement, project: Project, computed: Computed
       return judgeMountDeflection(requirement, project, computed)
     case 'absorberStroke':
       return judgeAbsorberStroke(requirement, project, computed)
+    case 'runUpMotion':
+      return judgeRunUpMotion(requirement, project, computed)
+    case 'runUpForce':
+      return judgeRunUpForce(requirement, project, computed)
     default:
       return assertNever(requirement, 'requirement')
   }

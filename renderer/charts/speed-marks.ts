@@ -151,6 +151,8 @@ function belongs(requirement: Requirement, place: LimitPlace): boolean {
     case 'modeSeparation':
     case 'mountLoad':
     case 'mountDeflection':
+    case 'runUpMotion':
+    case 'runUpForce':
       return false
   }
 }

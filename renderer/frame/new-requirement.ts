@@ -10,6 +10,8 @@ export const REQUIREMENT_NAMES: Readonly<Record<RequirementKind, string>> = {
   mountLoad: 'Load on the mounts',
   mountDeflection: 'Deflection of the mounts',
   absorberStroke: 'Travel of an absorber',
+  runUpMotion: 'Displacement during run-up and coast-down',
+  runUpForce: 'Force through a mount during run-up and coast-down',
 }
 
 export const REQUIREMENT_KINDS: readonly RequirementKind[] = [
@@ -54,6 +56,18 @@ export function newRequirement(kind: RequirementKind, project: Project, id: stri
       return { ...common, kind, limit: null }
     case 'absorberStroke':
       return { ...common, kind, speeds: 'chart', absorber: null, limit: null }
+    case 'runUpMotion':
+      return {
+        ...common,
+        kind,
+        place: 'mounts',
+        point: null,
+        direction: 'resultant',
+        during: 'both',
+        limit: null,
+      }
+    case 'runUpForce':
+      return { ...common, kind, during: 'both', limit: null }
   }
 }
 

@@ -13,6 +13,12 @@ const SPANS = {
   chart: 'every speed of the chart',
 } as const
 
+const DURING = {
+  both: 'run-up and coast-down',
+  up: 'run-up',
+  down: 'coast-down',
+} as const
+
 /** The requirements as they were put in; how they fare stands under the verdicts. */
 export function requirementInputs(project: Project, writer: Writer): readonly Block[] {
   if (project.requirements.length === 0) return []
@@ -27,7 +33,11 @@ export function requirementInputs(project: Project, writer: Writer): readonly Bl
     ],
     rows: project.requirements.map((requirement): readonly Cell[] => [
       subject(requirement, project, writer),
-      'speeds' in requirement ? SPANS[requirement.speeds] : 'at rest',
+      'speeds' in requirement
+        ? SPANS[requirement.speeds]
+        : 'during' in requirement
+          ? DURING[requirement.during]
+          : 'at rest',
       limitWords(requirement, writer),
       requirement.source,
       requirement.enabled ? 'on' : 'switched off',
@@ -63,6 +73,17 @@ function subject(requirement: Requirement, project: Project, writer: Writer): st
       const absorber = project.absorbers.find((candidate) => candidate.id === requirement.absorber)
       return `travel of ${absorber ? nameOf(absorber) : 'every absorber'}, zero to peak`
     }
+    case 'runUpMotion': {
+      const point = project.machine.points.find((candidate) => candidate.id === requirement.point)
+      const place =
+        requirement.place === 'mounts'
+          ? 'across the mounts'
+          : `of ${point ? nameOf(point) : 'a point not chosen'}`
+      const direction = requirement.direction === 'resultant' ? '' : `, direction ${requirement.direction}`
+      return `dynamic displacement ${place}${direction}, zero to peak`
+    }
+    case 'runUpForce':
+      return 'dynamic force through the hardest loaded mount'
     default:
       return assertNever(requirement, 'requirement')
   }
@@ -74,6 +95,7 @@ function limitWords(requirement: Requirement, writer: Writer): string {
     case 'modeSeparation':
       return bound('at least', requirement.limit, (value) => writer.quantity(value, 'share'))
     case 'transmittedForce':
+    case 'runUpForce':
       return bound('at most', requirement.limit, (value) => writer.quantity(value, 'force'))
     case 'vibrationVelocity':
       return requirement.scale === 'own'
@@ -85,6 +107,8 @@ function limitWords(requirement: Requirement, writer: Writer): string {
       return requirement.limit === null
         ? "each mount's own limit"
         : `at most ${writer.quantity(requirement.limit, 'deflection')}`
+    case 'runUpMotion':
+      return bound('at most', requirement.limit, (value) => writer.quantity(value, 'deflection'))
     case 'absorberStroke':
       return requirement.limit === null
         ? "each absorber's own limit"

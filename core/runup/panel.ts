@@ -1,0 +1,289 @@
+/* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
+import type { Poles } from '../network/poles.ts'
+import { DEGREE, speedSeries, type PanelPlan } from './panel-plan.ts'
+
+/** Highest power of a state's own series; exp(2 x) is cut at 1e-17 there. */
+const STATE_DEGREE = 25
+export const TERMS = STATE_DEGREE + 1
+/** Below this |kappa| a state's series runs upwards from its middle, above it downwards from its end. */
+const SLOW = 2
+
+/** One order's force on every state, each complex: constant + squared · w² + inertial · (w² - i w'), w = order · speed. */
+export interface StateLoad {
+  readonly order: number
+  readonly constantRe: Float64Array
+  readonly constantIm: Float64Array
+  readonly squaredRe: Float64Array
+  readonly squaredIm: Float64Array
+  readonly inertialRe: Float64Array
+  readonly inertialIm: Float64Array
+}
+
+/**
+ * The states over one panel for one order, exact but for rounding and the cut of the series. With
+ * x = (t - middle) / half the phase is order · (straight line + rest(x)); against the straight line a
+ * state obeys v' = kappa v + half · g(x), kappa = half (lambda - i order speed), g a power series, so
+ * v(x) = P(x) + c exp(kappa (x + 1)), P a polynomial: the forced motion, c exp(...): free vibration.
+ */
+export interface Panel {
+  readonly count: number
+  /** P_j: power k at j TERMS + k */
+  readonly forcedRe: Float64Array
+  readonly forcedIm: Float64Array
+  readonly freeRe: Float64Array
+  readonly freeIm: Float64Array
+  readonly kappaRe: Float64Array
+  readonly kappaIm: Float64Array
+  /** upper bound of |v_j| over the panel */
+  readonly bound: Float64Array
+  /** order · rest at the panel's begin and end [rad] */
+  readonly phase: Float64Array
+  /** size of the series' last terms against their first: what has been cut */
+  readonly cut: Float64Array
+}
+
+export interface PanelWork {
+  readonly panel: Panel
+  readonly speed: Float64Array
+  readonly speedSquared: Float64Array
+  /** force per unit: constant, squared, inertial law */
+  readonly series: readonly (readonly [Float64Array, Float64Array])[]
+}
+
+export function panelWork(count: number): PanelWork {
+  const make = (size: number) => new Float64Array(size)
+  const terms = () => make(DEGREE + 1)
+  return {
+    panel: {
+      count,
+      forcedRe: make(count * TERMS),
+      forcedIm: make(count * TERMS),
+      freeRe: make(count),
+      freeIm: make(count),
+      kappaRe: make(count),
+      kappaIm: make(count),
+      bound: make(count),
+      phase: make(2),
+      cut: make(1),
+    },
+    speed: terms(),
+    speedSquared: terms(),
+    series: [
+      [terms(), terms()],
+      [terms(), terms()],
+      [terms(), terms()],
+    ],
+  }
+}
+
+/**
+ * Fills `work.panel` for one panel and order.
+ * @param begin states at its begin against the true phase (y exp(-i order phase)), re and im from `at` on
+ */
+export function fillPanel(
+  work: PanelWork,
+  plan: PanelPlan,
+  index: number,
+  poles: Poles,
+  load: StateLoad,
+  beginRe: Float64Array,
+  beginIm: Float64Array,
+  at: number,
+): void {
+  const half = plan.half[index]!
+  const piece = plan.course.pieces[plan.piece[index]!]!
+  speedSeries(piece, plan.middle[index]!, half, work.speed)
+  forceSeries(work, load.order, half)
+  const { panel, speed } = work
+  const w = load.order * speed[0]!
+  const turnRe = Math.cos(panel.phase[0]!)
+  const turnIm = Math.sin(panel.phase[0]!)
+  for (let j = 0; j < panel.count; j++) {
+    panel.kappaRe[j] = half * poles.re[j]!
+    panel.kappaIm[j] = half * (poles.im[j]! - w)
+    forcedMotion(work, load, j, half)
+    const re = beginRe[at + j]!
+    const im = beginIm[at + j]!
+    freeMotion(panel, j, re * turnRe - im * turnIm, re * turnIm + im * turnRe)
+  }
+}
+
+/** exp(i order rest), the same times w², and times w² - i w', as power series in x. */
+function forceSeries({ series, speed, speedSquared, panel }: PanelWork, order: number, half: number): void {
+  const [[baseRe, baseIm], [squareRe, squareIm], [massRe, massIm]] = series as [
+    [Float64Array, Float64Array],
+    [Float64Array, Float64Array],
+    [Float64Array, Float64Array],
+  ] // three by construction
+  let begin = 0
+  let end = 0
+  let top = 1
+  for (let k = 1; k < DEGREE; k++) {
+    // rest' = half (speed - speed at the middle)
+    const term = (order * half * speed[k]!) / (k + 1)
+    if (term !== 0) top = k
+    end += term
+    begin += k % 2 === 0 ? -term : term
+  }
+  panel.phase[0] = begin
+  panel.phase[1] = end
+  baseRe[0] = 1
+  baseIm[0] = 0
+  for (let k = 1; k <= DEGREE; k++) {
+    let re = 0
+    let im = 0
+    // k E_k = i sum (m rest_m) E_(k-m), with m rest_m = order half speed_(m-1)
+    for (let m = 2; m <= Math.min(k, top + 1); m++) {
+      const slope = order * half * speed[m - 1]!
+      re -= slope * baseIm[k - m]!
+      im += slope * baseRe[k - m]!
+    }
+    baseRe[k] = re / k
+    baseIm[k] = im / k
+  }
+  for (let m = 0; m <= DEGREE; m++) speedSquared[m] = m <= 2 * top ? coefficientOfSquare(speed, m) : 0
+  for (let k = 0; k <= DEGREE; k++) {
+    let re = 0
+    let im = 0
+    let massR = 0
+    let massI = 0
+    for (let m = 0; m <= Math.min(k, 2 * top); m++) {
+      const square = order * order * speedSquared[m]!
+      re += square * baseRe[k - m]!
+      im += square * baseIm[k - m]!
+      if (m < top) {
+        const rate = (order * (m + 1) * speed[m + 1]!) / half
+        massR += rate * baseIm[k - m]!
+        massI -= rate * baseRe[k - m]!
+      }
+    }
+    squareRe[k] = re
+    squareIm[k] = im
+    massRe[k] = re + massR
+    massIm[k] = im + massI
+  }
+  const last =
+    Math.hypot(baseRe[DEGREE]!, baseIm[DEGREE]!) + Math.hypot(baseRe[DEGREE - 1]!, baseIm[DEGREE - 1]!)
+  panel.cut[0] = last
+}
+
+/** Coefficient m of the square of a series. */
+function coefficientOfSquare(series: Float64Array, m: number): number {
+  let sum = 0
+  for (let i = 0; i <= m; i++) sum += series[i]! * series[m - i]!
+  return sum
+}
+
+function forcedMotion({ panel, series }: PanelWork, load: StateLoad, j: number, half: number): void {
+  const { forcedRe: re, forcedIm: im } = panel
+  const at = j * TERMS
+  const a = load.constantRe[j]!
+  const b = load.constantIm[j]!
+  const c = load.squaredRe[j]!
+  const d = load.squaredIm[j]!
+  const e = load.inertialRe[j]!
+  const f = load.inertialIm[j]!
+  const [baseRe, baseIm] = series[0]!
+  const [squareRe, squareIm] = series[1]!
+  const [massRe, massIm] = series[2]!
+  for (let k = 0; k <= DEGREE; k++) {
+    re[at + k] =
+      half *
+      (a * baseRe[k]! -
+        b * baseIm[k]! +
+        c * squareRe[k]! -
+        d * squareIm[k]! +
+        e * massRe[k]! -
+        f * massIm[k]!)
+    im[at + k] =
+      half *
+      (a * baseIm[k]! +
+        b * baseRe[k]! +
+        c * squareIm[k]! +
+        d * squareRe[k]! +
+        e * massIm[k]! +
+        f * massRe[k]!)
+  }
+  const x = panel.kappaRe[j]!
+  const y = panel.kappaIm[j]!
+  if (x * x + y * y < SLOW * SLOW) seriesUp(re, im, at, x, y)
+  else seriesDown(re, im, at, x, y)
+}
+
+/** In place: (k + 1) P_(k+1) = kappa P_k + g_k from P_0 = 0. */
+function seriesUp(re: Float64Array, im: Float64Array, at: number, x: number, y: number): void {
+  let nextRe = re[at]!
+  let nextIm = im[at]!
+  re[at] = im[at] = 0
+  for (let k = 0; k < STATE_DEGREE; k++) {
+    const p = re[at + k]!
+    const q = im[at + k]!
+    const gRe = nextRe
+    const gIm = nextIm
+    nextRe = k < DEGREE ? re[at + k + 1]! : 0
+    nextIm = k < DEGREE ? im[at + k + 1]! : 0
+    re[at + k + 1] = (x * p - y * q + gRe) / (k + 1)
+    im[at + k + 1] = (x * q + y * p + gIm) / (k + 1)
+  }
+}
+
+/** In place: kappa P_k = (k + 1) P_(k+1) - g_k from the highest power down. */
+function seriesDown(re: Float64Array, im: Float64Array, at: number, x: number, y: number): void {
+  const size = x * x + y * y
+  const p = x / size
+  const q = -y / size
+  let aboveRe = 0
+  let aboveIm = 0
+  for (let k = DEGREE; k >= 0; k--) {
+    const a = (k + 1) * aboveRe - re[at + k]!
+    const b = (k + 1) * aboveIm - im[at + k]!
+    aboveRe = a * p - b * q
+    aboveIm = a * q + b * p
+    re[at + k] = aboveRe
+    im[at + k] = aboveIm
+  }
+  for (let k = DEGREE + 1; k < TERMS; k++) re[at + k] = im[at + k] = 0
+}
+
+/** What the forced motion lacks at the panel's begin vibrates freely from there. */
+function freeMotion(panel: Panel, j: number, beginRe: number, beginIm: number): void {
+  const { forcedRe, forcedIm } = panel
+  const at = j * TERMS
+  let re = 0
+  let im = 0
+  let bound = 0
+  for (let k = STATE_DEGREE; k >= 0; k--) {
+    const p = forcedRe[at + k]!
+    const q = forcedIm[at + k]!
+    re = p - re
+    im = q - im
+    bound += Math.sqrt(p * p + q * q)
+  }
+  panel.freeRe[j] = beginRe - re
+  panel.freeIm[j] = beginIm - im
+  panel.bound[j] = bound + Math.hypot(beginRe - re, beginIm - im)
+}
+
+/** States at the panel's end against the true phase, written from `at` on. */
+export function panelEnd(panel: Panel, endRe: Float64Array, endIm: Float64Array, at: number): void {
+  const { forcedRe, forcedIm, count } = panel
+  const turnRe = Math.cos(panel.phase[1]!)
+  const turnIm = -Math.sin(panel.phase[1]!)
+  for (let j = 0; j < count; j++) {
+    let re = 0
+    let im = 0
+    for (let k = 0; k < TERMS; k++) {
+      re += forcedRe[j * TERMS + k]!
+      im += forcedIm[j * TERMS + k]!
+    }
+    const size = Math.exp(2 * panel.kappaRe[j]!)
+    const cos = size * Math.cos(2 * panel.kappaIm[j]!)
+    const sin = size * Math.sin(2 * panel.kappaIm[j]!)
+    const a = panel.freeRe[j]!
+    const b = panel.freeIm[j]!
+    re += a * cos - b * sin
+    im += a * sin + b * cos
+    endRe[at + j] = re * turnRe - im * turnIm
+    endIm[at + j] = re * turnIm + im * turnRe
+  }
+}

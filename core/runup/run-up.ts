@@ -1,0 +1,173 @@
+/* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
+import type { Observed } from '../excitation/observed.ts'
+import { groupByOrder, type SourceLoad } from '../excitation/order-loads.ts'
+import { polesOf, type Poles } from '../network/poles.ts'
+import type { Project } from '../project/project.ts'
+import type { Problem, RunUpPass, RunUpPeak, RunUpPeaks, RunUpResult } from '../results.ts'
+import { envelopeOf } from './envelope.ts'
+import { marchThrough, type March } from './march.ts'
+import { planPanels } from './panel-plan.ts'
+import { findPeaks, PEAK_TOLERANCE, type Peaks } from './peak-search.ts'
+import { speedCourse, speedOf, type SpeedCourse } from './speed-course.ts'
+import { steadyPeaks } from './steady-peak.ts'
+import { stateLoad, travelRows, watchForce, watchRows, watchSum, type Watch } from './watch.ts'
+
+/** About how many samples the chart's curve has. */
+const ENVELOPE_SAMPLES = 1500
+
+/** What of a run-up is wanted; left out: everything. */
+export interface RunUpScope {
+  /** false: no curve for the chart */
+  readonly envelope?: boolean
+  /** ids of the points wanted; left out: all */
+  readonly points?: ReadonlySet<string>
+  readonly force?: boolean
+  readonly travel?: boolean
+  readonly strokes?: boolean
+  readonly up?: boolean
+  readonly down?: boolean
+  /** how exactly peaks are searched, as a share of them */
+  readonly tolerance?: number
+}
+
+export interface RunUpFinding {
+  readonly result: RunUpResult
+  readonly problems: readonly Problem[]
+}
+
+/**
+ * How far everything moves while the shaft runs up to speed and coasts down again: the network in the
+ * first-order form of its modes, taken exactly through the course of speed (phase = order times shaft
+ * angle, unbalance with its tangential part).
+ * F. M. Lewis, Vibration during acceleration through a critical speed, Trans. ASME 54, 1932 (the problem).
+ * @param observed the network with all that stands on it
+ * @param loads every enabled source
+ */
+export function runUpOf(
+  project: Project,
+  observed: Observed,
+  loads: readonly SourceLoad[],
+  scope: RunUpScope = {},
+): RunUpFinding {
+  const { solver, system } = observed
+  const modes = { count: solver.freedoms, omegaSquared: solver.omegaSquared, shapes: solver.shapes }
+  const poles = polesOf(system, modes)
+  if (poles === null) {
+    const message = 'The run-up cannot be computed: a mode of the machine is not stable.'
+    return { result: { up: null, down: null }, problems: [{ field: 'runUp', message, kind: 'invalid' }] }
+  }
+  const orders = groupByOrder(loads).map(({ order, loads: own }) => stateLoad(observed, poles, order, own))
+  const watched = watchAll(project, observed, poles, scope)
+  const problems: Problem[] = []
+  const pass = (direction: 'up' | 'down'): RunUpPass | null => {
+    const { enabled, law, hold } = project.runUp[direction]
+    if (!enabled || scope[direction] === false) return null
+    const found = speedCourse(law, direction, hold, project.machine.duty, `runUp.${direction}.law`)
+    problems.push(...found.problems)
+    if (found.course === null) return null
+    const plan = planPanels(found.course, Math.max(...orders.map(({ order }) => order)))
+    const march = marchThrough(plan, poles, orders)
+    if (march === null) {
+      problems.push({
+        field: `runUp.${direction}.law`,
+        message:
+          'At its first speed the excitation meets a resonance without damping: it has no bound there.',
+        kind: 'invalid',
+      })
+      return null
+    }
+    return passOf(march, hold, watched, scope)
+  }
+  return { result: { up: pass('up'), down: pass('down') }, problems }
+}
+
+interface Watched {
+  readonly watches: readonly Watch[]
+  readonly points: readonly { readonly id: string; readonly at: number }[]
+  readonly mounts: readonly { readonly id: string; readonly force: number; readonly travel: number }[]
+  readonly support: number
+  readonly absorbers: readonly { readonly id: string; readonly at: number }[]
+}
+
+function watchAll(project: Project, observed: Observed, poles: Poles, scope: RunUpScope): Watched {
+  const modal = { poles, shapes: observed.solver.shapes }
+  const watches: Watch[] = []
+  const add = (watch: Watch) => watches.push(watch) - 1
+  const points = project.machine.points.flatMap(({ id }, index) => {
+    if (scope.points?.has(id) === false) return []
+    return [{ id, at: add(watchRows(modal, observed.points[index]!)) }]
+  })
+  const none = watchRows(modal, [])
+  const forces = scope.force === false ? [] : observed.supports.map((element) => watchForce(modal, element))
+  const mounts = observed.supports.map((element, index) => ({
+    id: element.element.id,
+    force: add(forces[index] ?? none),
+    travel: add(scope.travel === false ? none : watchRows(modal, travelRows(observed.system, element))),
+  }))
+  const support = add(forces.length === 0 ? none : watchSum(forces))
+  const absorbers = (scope.strokes === false ? [] : observed.absorbers).map(({ id, stroke }) => ({
+    id,
+    at: add(watchRows(modal, [stroke])),
+  }))
+  return { watches, points, mounts, support, absorbers }
+}
+
+function passOf(march: March, hold: number, watched: Watched, scope: RunUpScope): RunUpPass {
+  const { plan, poles, loads } = march
+  const tolerance = scope.tolerance ?? PEAK_TOLERANCE
+  const { peaks, complete } = findPeaks(march, watched.watches, tolerance)
+  const steady = steadyPeaks(poles, loads, watched.watches, speedRange(plan.course))
+  const one = (at: number, q: number) => peakOf(march, peaks[at]!, steady[at]!, q)
+  const all = (at: number): RunUpPeaks => ({
+    x: one(at, 0),
+    y: one(at, 1),
+    z: one(at, 2),
+    resultant: one(at, 3),
+  })
+  return {
+    from: plan.course.pieces[0]?.from ?? 0,
+    to: plan.course.pieces.at(-1)?.to ?? 0,
+    duration: plan.course.duration - hold,
+    hold,
+    converged: complete && plan.complete,
+    errorEstimate: tolerance + march.cut,
+    points: watched.points.map(({ id, at }) => ({ id, peaks: all(at) })),
+    mounts: watched.mounts.map(({ id, force, travel }) => ({ id, force: all(force), travel: all(travel) })),
+    support: all(watched.support),
+    absorbers: watched.absorbers.map(({ id, at }) => ({ id, stroke: one(at, 0) })),
+    envelope: scope.envelope === false ? null : envelope(march, watched, peaks),
+  }
+}
+
+function speedRange({ pieces }: SpeedCourse): readonly [number, number] {
+  const speeds = pieces.flatMap(({ from, to }) => [from, to])
+  return [Math.min(...speeds), Math.max(...speeds)]
+}
+
+function peakOf({ plan }: March, peaks: Peaks, steadyValues: Float64Array, q: number): RunUpPeak {
+  const panel = peaks.panel[q] ?? 0
+  const x = peaks.x[q] ?? -1
+  const value = peaks.value[q] ?? 0
+  const piece = plan.course.pieces[plan.piece[panel]!]!
+  const within = plan.middle[panel]! + plan.half[panel]! * x
+  const largest = steadyValues[q] ?? 0
+  const steady = Number.isFinite(largest) ? largest : null
+  return {
+    value,
+    time: plan.time[panel]! + plan.half[panel]! * x,
+    speed: speedOf(piece, Math.min(piece.duration, Math.max(0, within))),
+    steady,
+    ratio: steady === null || steady === 0 ? null : value / steady,
+  }
+}
+
+function envelope(march: March, watched: Watched, peaks: readonly Peaks[]): RunUpPass['envelope'] {
+  const of = watched.points.length > 0 ? 'point' : 'mount'
+  const places =
+    of === 'point' ? watched.points : watched.mounts.map(({ id, travel }) => ({ id, at: travel }))
+  const height = ({ at }: { readonly at: number }) => peaks[at]!.value[3] ?? 0
+  const worst = places.reduce((best, place) => (height(place) > height(best) ? place : best), places[0]!)
+  const top = { value: height(worst), panel: peaks[worst.at]!.panel[3]!, x: peaks[worst.at]!.x[3]! }
+  const { time, speed, value } = envelopeOf(march, watched.watches[worst.at]!, top, ENVELOPE_SAMPLES)
+  return { place: worst.id, of, time, speed, displacement: value }
+}

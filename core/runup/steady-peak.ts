@@ -1,0 +1,146 @@
+/* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
+import type { Poles } from '../network/poles.ts'
+import { steadyStates } from './march.ts'
+import type { StateLoad } from './panel.ts'
+import { addAmplitudes, objectivesOf, type Watch } from './watch.ts'
+
+/** Speeds looked at besides those about the resonances. */
+const EVEN = 48
+/** Distances from a resonance in half-power widths. */
+const AROUND = [-8, -4, -2, -1.2, -0.7, -0.35, 0, 0.35, 0.7, 1.2, 2, 4, 8] as const
+/** Rounds of moving onto the top of the curve through three points. */
+const ROUNDS = 6
+
+/**
+ * Largest steady values of watched quantities over a range of speeds: each direction, then the
+ * resultant, orders added up as in the run-up.
+ * @param range lowest and highest speed [rad/s]
+ * @returns Infinity where an order meets a resonance without damping
+ */
+export function steadyPeaks(
+  poles: Poles,
+  loads: readonly StateLoad[],
+  watches: readonly Watch[],
+  range: readonly [number, number],
+): readonly Float64Array[] {
+  const speeds = speedsToTry(poles, loads, range)
+  const block = loads.length * poles.count
+  const re = new Float64Array(block * speeds.length)
+  const im = new Float64Array(block * speeds.length)
+  speeds.forEach((speed, s) => {
+    loads.forEach((load, o) => {
+      steadyStates(poles, load, speed, re, im, s * block + o * poles.count)
+    })
+  })
+  return watches.map((watch) => {
+    const unbounded = meetsUndamped(poles, loads, watch, range)
+    const objectives = objectivesOf(watch)
+    if (unbounded) return new Float64Array(objectives).fill(Infinity)
+    return peaksOf(poles, loads, watch, speeds, re, im)
+  })
+}
+
+function speedsToTry(
+  poles: Poles,
+  loads: readonly StateLoad[],
+  [lowest, highest]: readonly [number, number],
+): Float64Array {
+  const speeds = Array.from({ length: EVEN }, (_, i) => lowest + ((highest - lowest) * i) / (EVEN - 1))
+  for (const { order } of loads) {
+    for (let j = 0; j < poles.count; j++) {
+      if (!(poles.im[j]! > 0)) continue
+      const width = Math.max(-poles.re[j]!, 1e-6 * poles.im[j]!)
+      for (const away of AROUND) speeds.push((poles.im[j]! + away * width) / order)
+    }
+  }
+  return Float64Array.from(speeds.filter((speed) => speed >= lowest && speed <= highest && speed > 0)).sort()
+}
+
+function meetsUndamped(
+  poles: Poles,
+  loads: readonly StateLoad[],
+  watch: Watch,
+  [lowest, highest]: readonly [number, number],
+): boolean {
+  return loads.some((load) => {
+    for (let j = 0; j < poles.count; j++) {
+      const speed = poles.im[j]! / load.order
+      if (poles.re[j] !== 0 || speed < lowest || speed > highest || !(speed > 0)) continue
+      const driven =
+        Math.abs(load.constantRe[j]!) +
+        Math.abs(load.constantIm[j]!) +
+        Math.abs(load.squaredRe[j]!) +
+        Math.abs(load.squaredIm[j]!) +
+        Math.abs(load.inertialRe[j]!) +
+        Math.abs(load.inertialIm[j]!)
+      if (driven * watch.size[j]! > 0) return true
+    }
+    return false
+  })
+}
+
+function peaksOf(
+  poles: Poles,
+  loads: readonly StateLoad[],
+  watch: Watch,
+  speeds: Float64Array,
+  re: Float64Array,
+  im: Float64Array,
+): Float64Array {
+  const block = loads.length * poles.count
+  const objectives = objectivesOf(watch)
+  const values = new Float64Array(speeds.length * objectives)
+  for (let s = 0; s < speeds.length; s++) {
+    addAmplitudes(watch, loads.length, poles.count, poles.count, re, im, s * block, values, s * objectives)
+  }
+  const oneRe = new Float64Array(block)
+  const oneIm = new Float64Array(block)
+  const one = new Float64Array(objectives)
+  const valueAt = (speed: number, q: number) => {
+    for (let o = 0; o < loads.length; o++) {
+      steadyStates(poles, loads[o]!, speed, oneRe, oneIm, o * poles.count)
+    }
+    addAmplitudes(watch, loads.length, poles.count, poles.count, oneRe, oneIm, 0, one, 0)
+    return one[q]!
+  }
+  return Float64Array.from({ length: objectives }, (_, q) => {
+    let top = 0
+    for (let s = 1; s < speeds.length; s++) {
+      if (values[s * objectives + q]! > values[top * objectives + q]!) top = s
+    }
+    const a = Math.max(0, top - 1)
+    const b = Math.min(speeds.length - 1, top + 1)
+    const value = (s: number) => values[s * objectives + q]!
+    if (speeds.length === 0) return 0
+    if (a === top || b === top) return value(top)
+    return climb(
+      (speed) => valueAt(speed, q),
+      [speeds[a]!, speeds[top]!, speeds[b]!],
+      [value(a), value(top), value(b)],
+    )
+  })
+}
+
+/** Highest value within a bracket whose middle is the highest of three, by parabolas through three points. */
+function climb(
+  valueAt: (speed: number) => number,
+  at: readonly [number, number, number],
+  values: readonly [number, number, number],
+): number {
+  let [a, m, b] = at
+  let [fa, fm, fb] = values
+  for (let round = 0; round < ROUNDS; round++) {
+    const p = (m - a) * (fm - fb)
+    const q = (m - b) * (fm - fa)
+    const x = m - ((m - a) * p - (m - b) * q) / (2 * (p - q))
+    if (!(x > a && x < b) || x === m) break
+    const fx = valueAt(x)
+    if (fx > fm) {
+      if (x < m) [b, fb] = [m, fm]
+      else [a, fa] = [m, fm]
+      ;[m, fm] = [x, fx]
+    } else if (x < m) [a, fa] = [x, fx]
+    else [b, fb] = [x, fx]
+  }
+  return fm
+}

@@ -1,0 +1,45 @@
+/* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
+import { refill, type March } from './march.ts'
+import { evaluateOrder, loadSignal, sample, signalWork } from './signal.ts'
+import type { Watch } from './watch.ts'
+
+/** A watched quantity against time: complex, orders together, the shaft at angle 0 at the start; the motion is the real part. */
+export interface Trace {
+  /** by direction */
+  readonly re: readonly Float64Array[]
+  readonly im: readonly Float64Array[]
+}
+
+/** @param times since the start, rising, within the course [s] */
+export function traceOf(march: March, watch: Watch, times: Float64Array): Trace {
+  const { plan, loads } = march
+  const signal = signalWork(march)
+  const scratch = sample()
+  const nothingLeftOut = new Float64Array(4)
+  const re = watch.axes.map(() => new Float64Array(times.length))
+  const im = watch.axes.map(() => new Float64Array(times.length))
+  let panel = -1
+  let next = 0
+  for (let i = 0; i < times.length; i++) {
+    const time = times[i]!
+    while (next < plan.count - 1 && time > plan.time[next]! + plan.half[next]!) next++
+    if (next !== panel) {
+      panel = next
+      for (let o = 0; o < loads.length; o++) signal.keep(o, refill(march, o, panel).panel)
+      loadSignal(signal, watch, nothingLeftOut)
+    }
+    const half = plan.half[panel]!
+    const x = (time - plan.time[panel]!) / half
+    const straight = plan.angle[panel]! + half * march.work.speed[0]! * x
+    for (let o = 0; o < loads.length; o++) {
+      evaluateOrder(signal, o, x, scratch)
+      const cos = Math.cos(loads[o]!.order * straight)
+      const sin = Math.sin(loads[o]!.order * straight)
+      for (let d = 0; d < watch.axes.length; d++) {
+        re[d]![i]! += signal.nowRe[d]! * cos - signal.nowIm[d]! * sin
+        im[d]![i]! += signal.nowRe[d]! * sin + signal.nowIm[d]! * cos
+      }
+    }
+  }
+  return { re, im }
+}
