@@ -20,8 +20,6 @@ const RUNTIME_PACKAGE = join(ROOT, 'node_modules', 'electron')
 const ATTEMPT_FILE = join(ROOT, 'out', 'runtime-attempt')
 const PROBE_LIMIT = 4_000
 const FETCH_LIMIT = 300_000
-/** What `main.ts` prints when its window shows. */
-const WINDOW_SHOWN = 'Stillbed is open.'
 
 const say = (line) => console.log(line)
 
@@ -45,7 +43,9 @@ async function main() {
   const decision = await decide(options.host)
   if (decision.host === 'none') fail(3, `The desktop window cannot be had: ${decision.reason}.`)
   if (decision.host === 'browser') return serve(options, decision.reason)
-  const failure = await openWindow(decision.runtime, options)
+  say('Stillbed opens in its desktop window.')
+  const args = [ROOT, ...(options.library ? ['--library', options.library] : [])]
+  const failure = await openWindow(decision.runtime, args)
   if (failure === null) return
   if (options.host === 'desktop') fail(3, `The desktop window could not be opened: ${failure}`)
   await serve(options, `the desktop window could not be opened (${failure})`)
@@ -101,38 +101,6 @@ async function fetchRuntime(again) {
   }
   if (findRuntime() === null) writeFileSync(ATTEMPT_FILE, version)
 }
-
-/** @returns {Promise<string | null>} null when the window has shown, else the runtime's last words */
-function openWindow(runtime, options) {
-  say('Stillbed opens in its desktop window.')
-  const args = [ROOT, ...(options.library ? ['--library', options.library] : [])]
-  return new Promise((resolve) => {
-    const child = spawn(runtime, args, { stdio: ['ignore', 'pipe', 'pipe'] })
-    let shown = false
-    let words = ''
-    child.stdout.on('data', (chunk) => {
-      if (String(chunk).includes(WINDOW_SHOWN)) shown = true
-      process.stdout.write(chunk)
-    })
-    child.stderr.on('data', (chunk) => {
-      words = (words + chunk).slice(-2000)
-      if (shown) process.stderr.write(chunk)
-    })
-    const forward = (signal) => child.kill(signal)
-    for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, forward)
-    const end = (failure) => {
-      for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.off(signal, forward)
-      resolve(failure)
-    }
-    child.once('error', (error) => end(error.message))
-    child.once('close', (code, signal) => {
-      if (shown || code === 0) process.exitCode = code ?? 1
-      end(shown || code === 0 ? null : lastLine(words) || `it ended with ${signal ?? `code ${code}`}`)
-    })
-  })
-}
-
-const lastLine = (text) => text.trim().split('\n').at(-1)?.slice(0, 300) ?? ''
 
 async function serve(options, reason) {
   const { startLoopbackHost } = await import(pathToFileURL(join(ROOT, 'out', 'shell', 'loopback.js')).href)

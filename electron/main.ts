@@ -141,6 +141,9 @@ function showAbout(version: string, library: string): void {
 function giveUp(error: unknown): void {
   const words = error instanceof Error ? error.message : String(error)
   process.stderr.write(`${words}\n`)
-  if (error instanceof StorageError) dialog.showErrorBox('Stillbed cannot open its library', words)
-  app.exit(1)
+  try {
+    if (error instanceof StorageError) dialog.showErrorBox('Stillbed cannot open its library', words)
+  } finally {
+    app.exit(1)
+  }
 }

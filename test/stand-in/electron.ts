@@ -33,7 +33,6 @@ export async function startBrowser(): Promise<string> {
     contentsCreated: (contents) => app.emit('web-contents-created', {}, contents),
     windowClosed: () => app.windowClosed(),
   })
-  app.once('ready', () => void defaultSession.apply(started))
   return started.line
 }
 

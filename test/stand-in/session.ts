@@ -6,8 +6,8 @@ import type { Chromium } from './chromium.ts'
 type PermissionHandler = (contents: unknown, permission: string, answer: (granted: boolean) => void) => void
 type RequestHandler = (details: { url: string }, answer: (decision: { cancel?: boolean }) => void) => void
 
-/** Names that a page may ask for, in Electron's spelling and in Chromium's. */
-const PERMISSIONS = { geolocation: 'geolocation', notifications: 'notifications', midi: 'midi' } as const
+/** What a page may ask for; Electron and Chromium spell these alike. */
+const PERMISSIONS = ['geolocation', 'notifications', 'midi'] as const
 
 /** The default session: permissions, requests and downloads as main decides them. */
 export class Session extends EventEmitter {
@@ -30,12 +30,12 @@ export class Session extends EventEmitter {
     return new Promise((resolve) => this.#filter({ url }, ({ cancel = false }) => resolve(cancel)))
   }
 
-  /** After Playwright has set its own way with downloads, which the last one wins. */
+  /** For the first window: by then main has set its handlers, and Playwright its own way with downloads. */
   async apply({ cdp, folder }: Chromium): Promise<void> {
-    for (const [name, browserName] of Object.entries(PERMISSIONS)) {
+    for (const name of PERMISSIONS) {
       const granted = await new Promise<boolean>((resolve) => this.#permission(null, name, resolve))
       const setting = granted ? 'granted' : 'denied'
-      await cdp.send('Browser.setPermission', { permission: { name: browserName }, setting })
+      await cdp.send('Browser.setPermission', { permission: { name }, setting })
     }
     await cdp.send('Browser.setDownloadBehavior', {
       behavior: 'allowAndName',

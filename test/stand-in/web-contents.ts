@@ -57,6 +57,7 @@ export class WebContents extends EventEmitter {
 
   async #attach(size: object, preload: string): Promise<string> {
     const { cdp } = this.#parts.chromium
+    await this.session.apply(this.#parts.chromium)
     const { targetId } = await cdp.send<{ targetId: string }>('Target.createTarget', {
       url: 'about:blank',
       ...size,
@@ -169,6 +170,15 @@ export class WebContents extends EventEmitter {
 
   setWindowOpenHandler(handler: OpenHandler): void {
     this.#openHandler = handler
+  }
+
+  forcefullyCrashRenderer(): void {
+    void this.#send('Page.crash').catch(() => {})
+  }
+
+  async executeJavaScript(expression: string): Promise<unknown> {
+    const wish = { expression, awaitPromise: true, returnByValue: true }
+    return (await this.#send<{ result: { value: unknown } }>('Runtime.evaluate', wish)).result.value
   }
 
   send(channel: string, ...args: unknown[]): void {

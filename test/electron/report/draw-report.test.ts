@@ -63,13 +63,15 @@ describe('printed report', () => {
     const many: Project = {
       ...project,
       mounting: {
-        types: project.mounting.types,
+        ...project.mounting,
         placed: Array.from({ length: 120 }, (_, index) => ({
           id: `m${index}`,
           name: `M${index + 1}`,
           type: type?.id ?? '',
           position: [0.01 * index, index % 2 === 0 ? -0.3 : 0.3, 0],
           tilt: null,
+          shim: 0,
+          share: null,
         })),
       },
     }

@@ -1,0 +1,1 @@
+export function openWindow(runtime: string, args: readonly string[]): Promise<string | null>
