@@ -21,7 +21,15 @@ export function addMount(draft: Project, evaluation: Evaluation | null, position
   const type = typeForNext(draft, evaluation, 4)
   const { placed } = draft.mounting
   const id = newId('m', placed)
-  placed.push({ id, name: newName('M', placed), type, position: [...position], tilt: null })
+  placed.push({
+    id,
+    name: newName('M', placed),
+    type,
+    position: [...position],
+    tilt: null,
+    shim: 0,
+    share: null,
+  })
   return id
 }
 

@@ -121,6 +121,8 @@ export function setOutPairs({ pairs, length, width, centre, type }: SettingOut):
         type,
         position: [tidy(centre[0] + along), tidy(centre[1] + (side * width) / 2), centre[2]],
         tilt: null,
+        shim: 0,
+        share: null,
       })
     }
   }
@@ -145,12 +147,16 @@ export function firstType(
     name: newName('Type ', types),
     kind: '',
     stiffness: [stiffness, stiffness, stiffness],
+    law: { kind: 'linear' },
+    design: null,
     dynamicRatio: 1,
     lossFactor: 0.05,
     viscous: [0, 0, 0],
     ratedLoad: null,
     leastLoad: null,
     deflectionLimit: null,
+    snubberGap: null,
+    stiffnessAtTemperature: null,
     height: null,
     price: null,
     note: '',
