@@ -29,6 +29,15 @@ export function weightOf(series: ChartSeries): number {
   return series.role === 'main' || series.role === 'accent' ? 1.9 : 1.4
 }
 
+/**
+ * Lower numbers lie on top. Pinned and reference lines lie behind those that follow the present
+ * inputs; of coinciding curves the sparser dash lies over the fuller one, so that both are seen.
+ */
+function drawingOrder({ role, dash }: ChartSeries): number {
+  if (role === 'points') return -100
+  return (role === 'pinned' || role === 'reference' ? 100 : 0) - dash
+}
+
 export function datasetOf(curve: DrawnCurve, palette: Palette): CurveDataset {
   const { series } = curve
   const markers = series.role === 'points'
@@ -44,8 +53,7 @@ export function datasetOf(curve: DrawnCurve, palette: Palette): CurveDataset {
     pointBackgroundColor: palette.paper,
     pointBorderColor: palette.ink,
     pointBorderWidth: 1.5,
-    // pinned and reference lines lie behind those that follow the present inputs
-    order: series.role === 'pinned' || series.role === 'reference' ? 2 : markers ? 0 : 1,
+    order: drawingOrder(series),
   }
 }
 

@@ -26,6 +26,8 @@ export interface ChartAxis {
   readonly title: string
   readonly dimension: Dimension
   readonly scale?: ScaleKind
+  /** the scale is the only one that makes sense here: no choice is offered */
+  readonly onlyScale?: boolean
   /** value that is 0 dB [SI]; absent: no dB switch */
   readonly decibelReference?: number
   /** reference as said on the axis, such as `re 1` */

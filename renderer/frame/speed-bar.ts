@@ -3,7 +3,7 @@ import type { Evaluation } from '../../core/results.ts'
 import { formatPlain } from '../../core/units/format.ts'
 import { factorOf } from '../../core/units/parse.ts'
 import { placeLabels } from '../charts/label-rows.ts'
-import { roundUp, type AxisRange } from '../charts/ranges.ts'
+import type { AxisRange } from '../charts/ranges.ts'
 import { crossingName, crossingsUpTo, standingModes } from '../charts/speed-marks.ts'
 import { thin } from '../charts/thin.ts'
 
@@ -44,7 +44,7 @@ export function barTicks(
 ): readonly BarTick[] {
   const factor = factorOf('shaftSpeed', 'SI')
   const last = top / factor
-  const step = roundUp(last / Math.max(2, Math.floor(width / TICK_ROOM)))
+  const step = tickStep(last / Math.max(2, Math.floor(width / TICK_ROOM)))
   const ticks: BarTick[] = []
   for (let index = 0; index * step <= last * (1 + 1e-9); index += 1) {
     const value = index * step
@@ -54,6 +54,12 @@ export function barTicks(
     if (clear) ticks.push({ left, text })
   }
   return ticks
+}
+
+/** Next of 1, 2, 5 times a power of ten that is not below the least step. */
+function tickStep(least: number): number {
+  const power = 10 ** Math.floor(Math.log10(least))
+  return ([1, 2, 5].find((step) => step * power >= least) ?? 10) * power
 }
 
 /** Order crossings on the bar; labels that find no room stay out, their ticks do not. */
