@@ -1,7 +1,7 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
 import { refill, type March } from './march.ts'
 import { evaluateSignal, loadSignal, sample, signalWork, type SignalWork } from './signal.ts'
-import { speedOf } from './speed-course.ts'
+import { speedsAt } from './speed-course.ts'
 import type { Watch } from './watch.ts'
 
 /** Samples of a smooth panel, per beat of a free vibration, and of any panel at most. */
@@ -53,7 +53,7 @@ export function envelopeOf(march: March, watch: Watch, top: Top, samples: number
     if (panel === plan.count - 1) put(panel, 1)
   }
   const kept = thin(Float64Array.from(value), samples)
-  const speed = speedsAt(march, time)
+  const speed = speedsAt(march.plan.course, time)
   return {
     time: Float64Array.from(kept, (i) => time[i]!),
     speed: Float64Array.from(kept, (i) => speed[i]!),
@@ -92,18 +92,4 @@ export function thin(value: Float64Array, samples: number): readonly number[] {
     if (to > from) kept.add(low).add(high)
   }
   return all.filter((i) => kept.has(i))
-}
-
-/** Speed at rising times since the start [rad/s]. */
-function speedsAt({ plan: { course } }: March, times: readonly number[]): Float64Array {
-  let piece = 0
-  let begun = 0
-  return Float64Array.from(times, (time) => {
-    while (piece < course.pieces.length - 1 && time > begun + course.pieces[piece]!.duration) {
-      begun += course.pieces[piece]!.duration
-      piece++
-    }
-    const part = course.pieces[piece]!
-    return speedOf(part, Math.min(part.duration, Math.max(0, time - begun)))
-  })
 }

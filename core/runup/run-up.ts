@@ -1,16 +1,17 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
 import type { Observed } from '../excitation/observed.ts'
-import { groupByOrder, type SourceLoad } from '../excitation/order-loads.ts'
-import { polesOf, type Poles } from '../network/poles.ts'
+import type { SourceLoad } from '../excitation/order-loads.ts'
+import type { Poles } from '../network/poles.ts'
 import type { Project } from '../project/project.ts'
 import type { Problem, RunUpPass, RunUpPeak, RunUpPeaks, RunUpResult } from '../results.ts'
 import { envelopeOf } from './envelope.ts'
 import { marchThrough, type March } from './march.ts'
 import { planPanels } from './panel-plan.ts'
 import { findPeaks, PEAK_TOLERANCE, type Peaks } from './peak-search.ts'
+import { firstOrder } from './prepared.ts'
 import { speedCourse, speedOf, type SpeedCourse } from './speed-course.ts'
 import { steadyPeaks } from './steady-peak.ts'
-import { stateLoad, travelRows, watchForce, watchRows, watchSum, type Watch } from './watch.ts'
+import { travelRows, watchForce, watchRows, watchSum, type Watch } from './watch.ts'
 
 /** About how many samples the chart's curve has. */
 const ENVELOPE_SAMPLES = 1500
@@ -49,14 +50,12 @@ export function runUpOf(
   loads: readonly SourceLoad[],
   scope: RunUpScope = {},
 ): RunUpFinding {
-  const { solver, system } = observed
-  const modes = { count: solver.freedoms, omegaSquared: solver.omegaSquared, shapes: solver.shapes }
-  const poles = polesOf(system, modes)
-  if (poles === null) {
+  const form = firstOrder(observed, loads)
+  if (form === null) {
     const message = 'The run-up cannot be computed: a mode of the machine is not stable.'
     return { result: { up: null, down: null }, problems: [{ field: 'runUp', message, kind: 'invalid' }] }
   }
-  const orders = groupByOrder(loads).map(({ order, loads: own }) => stateLoad(observed, poles, order, own))
+  const { poles, orders } = form
   const watched = watchAll(project, observed, poles, scope)
   const problems: Problem[] = []
   const pass = (direction: 'up' | 'down'): RunUpPass | null => {

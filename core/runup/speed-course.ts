@@ -171,6 +171,20 @@ export function speedOf({ from, constant: p, square: q }: SpeedPiece, time: numb
   return scale * Math.tan(Math.sign(p) * rate + Math.atan(from / scale))
 }
 
+/** Speed at rising times since the start [rad/s]. */
+export function speedsAt(course: SpeedCourse, times: ArrayLike<number>): Float64Array {
+  let piece = 0
+  let begun = 0
+  return Float64Array.from(times, (time) => {
+    while (piece < course.pieces.length - 1 && time > begun + (course.pieces[piece]?.duration ?? 0)) {
+      begun += course.pieces[piece]?.duration ?? 0
+      piece++
+    }
+    const part = course.pieces[piece]
+    return part ? speedOf(part, Math.min(part.duration, Math.max(0, time - begun))) : 0
+  })
+}
+
 function tablePieces(
   entries: readonly { readonly time: number; readonly speed: number }[],
   need: Needs,

@@ -10,6 +10,8 @@ const EVEN = 48
 const AROUND = [-8, -4, -2, -1.2, -0.7, -0.35, 0, 0.35, 0.7, 1.2, 2, 4, 8] as const
 /** Rounds of moving onto the top of the curve through three points. */
 const ROUNDS = 6
+/** A share of a quantity's drive below which a mode takes part by rounding only. */
+const ROUNDING = 1e-12
 
 /**
  * Largest steady values of watched quantities over a range of speeds: each direction, then the
@@ -33,10 +35,9 @@ export function steadyPeaks(
     })
   })
   return watches.map((watch) => {
-    const unbounded = meetsUndamped(poles, loads, watch, range)
-    const objectives = objectivesOf(watch)
-    if (unbounded) return new Float64Array(objectives).fill(Infinity)
-    return peaksOf(poles, loads, watch, speeds, re, im)
+    const peaks = peaksOf(poles, loads, watch, speeds, re, im)
+    const sizes = [...watch.axes.map(({ size }) => size), watch.size]
+    return peaks.map((value, q) => (meetsUndamped(poles, loads, sizes[q]!, range) ? Infinity : value))
   })
 }
 
@@ -50,33 +51,43 @@ function speedsToTry(
     for (let j = 0; j < poles.count; j++) {
       if (!(poles.im[j]! > 0)) continue
       const width = Math.max(-poles.re[j]!, 1e-6 * poles.im[j]!)
-      for (const away of AROUND) speeds.push((poles.im[j]! + away * width) / order)
+      for (const away of AROUND) {
+        // without damping there is no value at the very resonance
+        if (away === 0 && poles.re[j] === 0) continue
+        speeds.push((poles.im[j]! + away * width) / order)
+      }
     }
   }
   return Float64Array.from(speeds.filter((speed) => speed >= lowest && speed <= highest && speed > 0)).sort()
 }
 
+/** Whether an order that drives a resonance without damping, and so the quantity, meets it in the range. */
 function meetsUndamped(
   poles: Poles,
   loads: readonly StateLoad[],
-  watch: Watch,
+  size: Float64Array,
   [lowest, highest]: readonly [number, number],
 ): boolean {
   return loads.some((load) => {
-    for (let j = 0; j < poles.count; j++) {
+    const driven = Float64Array.from(size, (weight, j) => weight * driveOf(load, j))
+    const whole = driven.reduce((sum, part) => sum + part, 0)
+    return driven.some((part, j) => {
       const speed = poles.im[j]! / load.order
-      if (poles.re[j] !== 0 || speed < lowest || speed > highest || !(speed > 0)) continue
-      const driven =
-        Math.abs(load.constantRe[j]!) +
-        Math.abs(load.constantIm[j]!) +
-        Math.abs(load.squaredRe[j]!) +
-        Math.abs(load.squaredIm[j]!) +
-        Math.abs(load.inertialRe[j]!) +
-        Math.abs(load.inertialIm[j]!)
-      if (driven * watch.size[j]! > 0) return true
-    }
-    return false
+      const met = poles.re[j] === 0 && speed >= lowest && speed <= highest && speed > 0
+      return met && part > ROUNDING * whole
+    })
   })
+}
+
+function driveOf(load: StateLoad, j: number): number {
+  return (
+    Math.abs(load.constantRe[j]!) +
+    Math.abs(load.constantIm[j]!) +
+    Math.abs(load.squaredRe[j]!) +
+    Math.abs(load.squaredIm[j]!) +
+    Math.abs(load.inertialRe[j]!) +
+    Math.abs(load.inertialIm[j]!)
+  )
 }
 
 function peaksOf(
