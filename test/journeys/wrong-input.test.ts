@@ -74,9 +74,7 @@ describe('what cannot be used', () => {
     )
     await type(page, 'M2 x', x ?? '')
     await type(page, 'M2 y', y ?? '')
-    await expect
-      .poll(() => page.getByRole('main').innerText())
-      .toMatch(/M2 stands at the same point as M1/)
+    await expect.poll(() => page.getByRole('main').innerText()).toMatch(/M2 stands at the same point as M1/)
     await page.keyboard.press('Control+z')
     await page.keyboard.press('Control+z')
     await expect.poll(() => verdictTexts(page)).toEqual(before)
