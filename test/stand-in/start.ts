@@ -11,7 +11,7 @@ import { join, resolve } from 'node:path'
 import { pathToFileURL } from 'node:url'
 
 /** A main that has not been evaluated by then waits for a readiness that can only come afterwards [ms]. */
-const EVALUATION_LIMIT = 10_000
+const EVALUATION_LIMIT = Number(process.env['STAND_IN_PATIENCE'] ?? 10_000)
 
 const here = (file: string) => pathToFileURL(join(import.meta.dirname, file)).href
 registerHooks({
