@@ -101,7 +101,10 @@ export const requirementSchema = z.discriminatedUnion('kind', [
       .default('mounts')
       .meta({ description: 'displacement across the mounts, or of a point of the machine' }),
     point: identifier.nullable().default(null).meta({ description: 'id of the point, with place "point"' }),
-    direction: z.enum(['resultant', 'x', 'y', 'z']).default('resultant'),
+    direction: z
+      .enum(['resultant', 'x', 'y', 'z'])
+      .default('resultant')
+      .meta({ description: 'direction that is judged, or the resultant of the three' }),
     during,
     limit: optionalQuantity('deflection', 'clearance: largest dynamic displacement, zero to peak', {
       above: 0,

@@ -98,17 +98,19 @@ export const runUpSchema = z
     up: z
       .strictObject({
         enabled: z.boolean().default(true).meta({ description: 'false: the run-up is left out' }),
-        law: riseLaw.prefault({ by: 'ramp' }),
+        law: riseLaw.prefault({ by: 'ramp' }).meta({ description: 'how the speed rises' }),
         hold: hold(10),
       })
-      .prefault({}),
+      .prefault({})
+      .meta({ description: 'from rest, or from some speed, to the running speed' }),
     down: z
       .strictObject({
         enabled: z.boolean().default(true).meta({ description: 'false: the coast-down is left out' }),
-        law: fallLaw.prefault({ by: 'ramp' }),
+        law: fallLaw.prefault({ by: 'ramp' }).meta({ description: 'how the speed falls' }),
         hold: hold(0),
       })
-      .prefault({}),
+      .prefault({})
+      .meta({ description: 'from the running speed to rest, or to some speed' }),
   })
   .prefault({})
   .meta({ description: 'run-up to speed and coast-down through the resonances' })
