@@ -7,6 +7,7 @@ import type { Observed } from './excitation/observed.ts'
 import { sweepResponse } from './excitation/sweep.ts'
 import { install, type Installation } from './mounts/installation.ts'
 import { MACHINE } from './mounts/machine-network.ts'
+import { designedComponents } from './mounts/mount-type.ts'
 import { placedAbsorbers } from './mounts/placed-absorbers.ts'
 import { chartRange, sweepSpeeds } from './mounts/speeds.ts'
 import { pointReceptance } from './network/receptance.ts'
@@ -75,6 +76,7 @@ function compute(project: Project, scope: Scope): Computed {
     massSummary: summary,
     sourceSummaries: project.sources.map((source) => describeSource(source, project.machine, project.units)),
     statics: full?.statics ?? bare?.statics ?? null,
+    components: designedComponents(project),
     modes: bare?.modes ?? null,
     modesWithAbsorbers: full?.modes ?? null,
     response,

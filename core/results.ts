@@ -3,6 +3,7 @@
  * with time dependence exp(+i omega t). A part that cannot be computed is null and the reason
  * stands in `problems`; nothing here is ever NaN or infinite.
  */
+import type { ComponentFigures } from './components/analyse.ts'
 import type { Vec3 } from './project/fields.ts'
 import type { RequirementKind } from './project/requirements.ts'
 import type { Dimension } from './units/dimensions.ts'
@@ -88,6 +89,18 @@ export interface LateralCase {
   readonly largestUplift: number
   readonly largestSway: number
   readonly largestGapShare: number | null
+}
+
+/** A designed component by itself, whether it stands under the machine or not. */
+export interface ComponentResult {
+  /** id of its mount type */
+  readonly type: string
+  /** null where inputs are missing or contradict each other */
+  readonly figures: ComponentFigures | null
+  /** whether it can carry a machine */
+  readonly usable: boolean
+  /** fields as in the project, such as `mounting.types[0].design.wireDiameter` */
+  readonly problems: readonly Problem[]
 }
 
 export interface LateralStatics {
@@ -380,6 +393,8 @@ export interface Evaluation {
     readonly amplitude: number | null
   }[]
   readonly statics: Statics | null
+  /** every mount type that is designed, in the order of the types */
+  readonly components: readonly ComponentResult[]
   /** machine on its mounts, without absorbers */
   readonly modes: readonly Mode[] | null
   /** with every enabled absorber; null when there is none in place */

@@ -10,14 +10,15 @@ import type { Project } from '../project/project.ts'
 import type { MassSummary, Mode, Problem, Statics } from '../results.ts'
 import { describeModes } from './describe-modes.ts'
 import {
-  fittedMounts,
+  fitMounts,
   MACHINE,
   machineNetwork,
   mountName,
   type FittedMount,
   type PlacedAbsorber,
 } from './machine-network.ts'
-import { machineStatics, type MachineStatics } from './statics.ts'
+import { restOf } from './rest.ts'
+import type { MachineStatics } from './statics.ts'
 import { coincidentMounts, freeMotion } from './support.ts'
 
 /** The machine on its mounts, perhaps with absorbers, as far as it can be computed. */
@@ -42,8 +43,8 @@ export function install(
   absorbers: readonly PlacedAbsorber[],
   orders: readonly number[],
 ): Installation {
-  const mounts = fittedMounts(project)
-  if (mounts.length === 0) {
+  const fitted = fitMounts(project)
+  if (fitted.mounts.length === 0) {
     return {
       ...NOTHING,
       problems: [
@@ -51,13 +52,16 @@ export function install(
       ],
     }
   }
-  const cautions = coincidentMounts(mounts)
-  const standing = assemble(machineNetwork(mounts, summary, 'static'))
-  const free = freeMotion(standing, mounts, summary, project.units)
-  const state =
-    free === null ? machineStatics(standing, mounts, summary, project.analysis.gravity, absorbers) : null
-  if (state === null) return { ...NOTHING, problems: [...(free === null ? [] : [free]), ...cautions] }
-  const problems = [...cautions, ...liftedMounts(mounts, state.statics)]
+  const cautions = [...fitted.problems, ...coincidentMounts(fitted.mounts)]
+  if (!fitted.usable) return { ...NOTHING, problems: cautions }
+  const unloaded = assemble(machineNetwork(fitted.mounts, summary, 'static'))
+  const free = freeMotion(unloaded, fitted.mounts, summary, project.units)
+  const rest = free === null ? restOf(project, unloaded, fitted.mounts, summary, absorbers) : free
+  if (rest === null || 'kind' in rest) {
+    return { ...NOTHING, problems: [...(rest === null ? [] : [rest]), ...cautions] }
+  }
+  const { state, mounts, standing } = rest
+  const problems = [...cautions, ...rest.problems, ...liftedMounts(mounts, state.statics)]
   const dynamic = assemble(machineNetwork(mounts, summary, 'dynamic', absorbers))
   const withWeight = project.analysis.gravityStiffness
   const system = withWeight ? withGeometricStiffness(dynamic, state.loads) : dynamic

@@ -1,7 +1,7 @@
 import { z } from 'zod'
 import { UNIT_SYSTEMS } from '../units/dimensions.ts'
 import { absorberSchema } from './absorber.ts'
-import { label } from './fields.ts'
+import { direction, label, quantity, temperature } from './fields.ts'
 import { machineSchema } from './machine.ts'
 import { mountingSchema } from './mounts.ts'
 import { requirementSchema } from './requirements.ts'
@@ -40,6 +40,24 @@ const analysis = z
       .max(100)
       .default(9.80665)
       .meta({ description: 'acceleration of gravity [m/s²]', unit: 'm/s²' }),
+    temperature: temperature('temperature at which the mounts work; empty: that of their figures')
+      .nullable()
+      .default(null)
+      .meta({
+        description: 'temperature at which the mounts work; empty: that of their figures',
+        unit: '°C',
+      }),
+    lateralLoad: z
+      .strictObject({
+        factor: quantity('ratio', 'load over the weight', { above: 0, max: 10 }),
+        direction: direction('direction of the load; the opposite one is computed too'),
+      })
+      .nullable()
+      .default(null)
+      .meta({
+        description:
+          'equivalent static load through the centre of gravity, as for transport, belts or earthquake',
+      }),
   })
   .prefault({})
   .meta({ description: 'how the results are computed' })

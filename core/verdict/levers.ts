@@ -1,3 +1,4 @@
+import { withStiffnessTimes } from '../mounts/mount-type.ts'
 import type { Absorber } from '../project/absorber.ts'
 import type { Project } from '../project/project.ts'
 import type { Mode, Verdict } from '../results.ts'
@@ -77,10 +78,7 @@ const COMMON_LEVERS: readonly Lever[] = [
 ]
 
 function withStiffness(project: Project, factor: number): Project | null {
-  return withTypes(project, (type) => ({
-    ...type,
-    stiffness: [type.stiffness[0] * factor, type.stiffness[1] * factor, type.stiffness[2] * factor],
-  }))
+  return withTypes(project, (type) => withStiffnessTimes(type, factor))
 }
 
 function withDamping(project: Project, factor: number): Project | null {

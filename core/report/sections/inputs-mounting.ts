@@ -1,4 +1,5 @@
 import { directionWords } from '../../excitation/describe.ts'
+import { effectiveMountType } from '../../mounts/mount-type.ts'
 import type { Project } from '../../project/project.ts'
 import { nameOf, tuningWords, typeOf } from '../names.ts'
 import { column, textColumn, writeTable, type Cell } from '../raw-table.ts'
@@ -28,7 +29,7 @@ export function mountingInputs(project: Project, writer: Writer): readonly Block
 }
 
 function typeBlocks(project: Project, writer: Writer): readonly Block[] {
-  const { types } = project.mounting
+  const types = project.mounting.types.map((type) => effectiveMountType(type, project.analysis).type)
   if (types.length === 0) return [{ kind: 'paragraph', text: 'No type of mount is given.' }]
   const stiffness = {
     caption: 'Types of mount: stiffness and damping (local axes, z along the mount)',

@@ -11,7 +11,7 @@ import {
 } from '../../../renderer/pages/mounts/plan-moves.ts'
 
 function mount(id: string, x: number, y: number, tilt: PlacedMount['tilt'] = null): PlacedMount {
-  return { id, name: id.toUpperCase(), type: 't', position: [x, y, 0.1], tilt }
+  return { id, name: id.toUpperCase(), type: 't', position: [x, y, 0.1], tilt, shim: 0, share: null }
 }
 
 describe('moving mounts', () => {
