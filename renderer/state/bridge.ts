@@ -1,24 +1,21 @@
-import type { EndpointName, Invoke, Reply, Value } from '../../electron/api/contract.ts'
-import { bridgeName, type BridgeName } from '../../electron/api/bridge-name.ts'
+import type { DesktopBridge, Invoke, Reply, Value } from '../../electron/api/contract.ts'
+import { bridgeName } from '../../electron/api/bridge-name.ts'
 import { httpInvoke } from './bridge-http.ts'
-
-/** What the preload script exposes: one named function per endpoint. */
-type PreloadBridge = {
-  readonly [E in EndpointName as BridgeName<E>]: (argument: unknown) => Promise<Reply<Value<E>>>
-}
 
 declare global {
   interface Window {
-    readonly stillbed?: PreloadBridge
+    /** put there by the desktop's preload script; absent in a browser */
+    readonly stillbed?: DesktopBridge
   }
 }
 
 /** Calls the host, whichever carries it. It never throws: what went wrong is in the reply. */
 export const invoke: Invoke = async (endpoint, argument) => {
   try {
-    const preload = window.stillbed
-    if (!preload) return await httpInvoke(endpoint, argument)
-    const call = preload[bridgeName(endpoint)] as (value: unknown) => Promise<Reply<Value<typeof endpoint>>> // the mapped type pairs name and endpoint, which indexing by a generic loses
+    const desktop = window.stillbed
+    if (!desktop) return await httpInvoke(endpoint, argument)
+    // the mapped type pairs name and endpoint, which indexing by a generic loses
+    const call = desktop[bridgeName(endpoint)] as (given: unknown) => Promise<Reply<Value<typeof endpoint>>>
     return await call(argument)
   } catch (error) {
     const message = error instanceof Error ? error.message : String(error)
