@@ -4,7 +4,7 @@
  */
 import { spawn } from 'node:child_process'
 import { existsSync, readFileSync, writeFileSync } from 'node:fs'
-import { dirname, join } from 'node:path'
+import { dirname, join, resolve } from 'node:path'
 import { fileURLToPath, pathToFileURL } from 'node:url'
 import {
   USAGE,
@@ -53,7 +53,8 @@ async function main() {
 
 function readOptions() {
   try {
-    return parseLaunchArguments(process.argv.slice(2))
+    const options = parseLaunchArguments(process.argv.slice(2))
+    return { ...options, library: options.library && resolve(options.library) }
   } catch (error) {
     return fail(2, `npm start: ${error.message}\n${USAGE}`)
   }

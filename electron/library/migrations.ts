@@ -42,6 +42,8 @@ export const STEPS: readonly string[] = [
    );
    INSERT INTO project_text (rowid, name, reference, site, description, notes, tags, mount_type_names)
      SELECT number, name, reference, site, description, notes, tags, mount_type_names FROM project;`,
+  // A mount type is written in the shape of its project version, and brought up to date by the same steps.
+  'ALTER TABLE mount_type ADD COLUMN project_version INTEGER NOT NULL DEFAULT 1;',
 ]
 
 /** Version of the library in `db`; 0 for an empty file. */

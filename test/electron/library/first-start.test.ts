@@ -50,7 +50,7 @@ describe('the first start', () => {
       'demo/bad.json':
         '{"format":"stillbed-project","version":1,"machine":{"massProperties":{"from":"typed","mass":-1}}}',
       'demo/good.json': JSON.stringify(sampleProject()),
-      'catalogue/bad.json': '[{"id":"x"}]',
+      'catalogue/bad.json': '[{"id":""}]',
     })
     fillOnFirstStart(library, folder, (message) => warnings.push(message))
     expect(library.projects.list({}).map(({ name }) => name)).toEqual(['Sieve drive'])

@@ -19,6 +19,9 @@ function libraryOfVersion1(): string {
     `INSERT INTO project VALUES (1, @id, 7, @document, '2029-01-01T00:00:00.000Z', '2029-02-01T00:00:00.000Z', NULL,
        'Sieve drive', 'T-1', 'Test bay', 'Vibrating sieve', 'Übergabe', '["sieve"]', 'Coil 40', 250, 154.98, '[[0.4,0.3]]', 4, 0)`,
   ).run({ id: ID, document: JSON.stringify(sampleProject()) })
+  db.prepare("INSERT INTO mount_type VALUES ('t1', 1, ?)").run(
+    JSON.stringify(sampleProject().mounting.types[0]),
+  )
   db.close()
   return file
 }
@@ -43,6 +46,7 @@ describe('opening a library', () => {
     const library = testLibrary(file)
     expect(library.projects.open(ID)).toStrictEqual({ id: ID, revision: 7, project: sampleProject() })
     expect(library.projects.list({ query: 'uberg' })).toHaveLength(1)
+    expect(library.catalogue.list()).toStrictEqual(sampleProject().mounting.types)
     expect(library.projects.save(ID, 7, sampleProject()).revision).toBe(8)
     library.close()
     expect(versionOf(file)).toBe(STEPS.length)
