@@ -13,6 +13,7 @@ import { chartRange, sweepSpeeds } from './mounts/speeds.ts'
 import { pointReceptance } from './network/receptance.ts'
 import { summariseMass } from './project/mass.ts'
 import type { Project } from './project/project.ts'
+import type { SpeedSpan } from './project/requirements.ts'
 import { judgedOf } from './runup/judged.ts'
 import { runUpOf } from './runup/run-up.ts'
 import type {
@@ -26,6 +27,7 @@ import type {
 } from './results.ts'
 import { judge, type Computed } from './verdict/judge.ts'
 import { adviseLevers } from './verdict/levers.ts'
+import { speedsWithin, troubledSpan } from './verdict/trial-span.ts'
 
 export interface EvaluateOptions {
   /** about how many speeds the curves have; left out: 2 000 */
@@ -39,9 +41,11 @@ interface Scope {
   readonly sweepPoints: number
   /** false: the judged values only, without comparison and further speeds */
   readonly whole: boolean
+  /** speeds of the curves; null: no response at all */
+  readonly span: SpeedSpan | null
 }
 /** Trials of levers need what is judged, and that stands at resonances and given speeds. */
-const TRIAL: Scope = { sweepPoints: 400, whole: false }
+const TRIAL = { sweepPoints: 400, whole: false }
 
 /**
  * Everything that can be known about a project: the one door for interface, batch and tests.
@@ -49,9 +53,12 @@ const TRIAL: Scope = { sweepPoints: 400, whole: false }
  * `problems` says why, at the field.
  */
 export function evaluate(project: Project, options: EvaluateOptions = {}): Evaluation {
-  const computed = compute(project, { sweepPoints: options.sweepPoints ?? SWEEP_POINTS, whole: true })
-  const verdicts = adviseLevers(project, judge(project, computed), computed.modes, (changed) =>
-    judge(changed, compute(changed, TRIAL)),
+  const sweepPoints = options.sweepPoints ?? SWEEP_POINTS
+  const computed = compute(project, { sweepPoints, whole: true, span: 'chart' })
+  const judged = judge(project, computed)
+  const trial: Scope = { ...TRIAL, span: troubledSpan(project, judged) }
+  const verdicts = adviseLevers(project, judged, computed.modes, (changed) =>
+    judge(changed, compute(changed, trial)),
   )
   return { ...computed, verdicts }
 }
@@ -155,12 +162,12 @@ function respondTo(
   problems: Problem[],
 ): ResponseResult | null {
   const observed = (full ?? bare)?.observed ?? null
-  if (loads === null || observed === null) return null
+  if (loads === null || observed === null || scope.span === null) return null
   const modes = [...(bare?.modes ?? []), ...(full?.modes ?? [])]
   const range = chartRange(project, modes)
   if (range === null) return null
   const orders = groupByOrder(loads)
-  const speeds = sweepSpeeds(range, modes, scope.sweepPoints)
+  const speeds = speedsWithin(project, scope.span, sweepSpeeds(range, modes, scope.sweepPoints))
   const { runningSpeed } = project.machine.duty
   const without = full === null || !scope.whole ? null : (bare?.observed ?? null)
   const runningWithout =

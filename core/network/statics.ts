@@ -33,20 +33,29 @@ export function staticEquilibrium(system: System, loads: readonly StaticLoad[]):
   }
   const displacement = solvePositiveDefinite(system.stiffness, right)
   if (displacement === null) return null
-  return { displacement, forces: elementForces(system, displacement) }
-}
-
-/** Spring forces on the carried side of each element under a displacement of all freedoms [N]. */
-function elementForces(system: System, displacement: Float64Array): Vec3[] {
-  return system.elements.map(({ branches }) =>
+  const branchForces = system.elements.map(({ branches }) =>
+    branches.map(({ law, row }) => steadyPart(law).stiffness * rowTimes(row, displacement)),
+  )
+  // what rounding leaves unbalanced goes back as a load: the forces then balance to their last digits
+  // even where stiffnesses differ by many decades
+  const rest = Float64Array.from(right)
+  system.elements.forEach(({ branches }, e) => {
+    branches.forEach(({ row }, b) => {
+      addScaled(rest, row, -(branchForces[e]?.[b] ?? 0))
+    })
+  })
+  const correction = solvePositiveDefinite(system.stiffness, rest) ?? rest.fill(0)
+  const forces = system.elements.map(({ branches }, e) =>
     branches.reduce<Vec3>(
-      (sum, { branch, law, row }) =>
-        branch.motion === 'turn'
-          ? sum
-          : add(sum, scale(branch.axis, -steadyPart(law).stiffness * rowTimes(row, displacement))),
+      (sum, { branch, law, row }, b) => {
+        if (branch.motion === 'turn') return sum
+        const force = (branchForces[e]?.[b] ?? 0) + steadyPart(law).stiffness * rowTimes(row, correction)
+        return add(sum, scale(branch.axis, -force))
+      },
       [0, 0, 0],
     ),
   )
+  return { displacement: displacement.map((value, i) => value + (correction[i] ?? 0)), forces }
 }
 
 /** The forces of an element on its two ends, as loads on the nodes. */

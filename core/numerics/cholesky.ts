@@ -49,6 +49,13 @@ export function solvePositiveDefinite(
   const factor = new Float64Array(n * n)
   if (!cholesky(matrix, n, factor)) return null
   const x = Float64Array.from(rightSide)
+  solveFactored(factor, x)
+  return x
+}
+
+/** Solves L Lᵀ x = b in place. */
+function solveFactored(factor: Float64Array, x: Float64Array): void {
+  const n = x.length
   for (let i = 0; i < n; i++) {
     let sum = x[i]!
     for (let k = 0; k < i; k++) sum -= factor[i * n + k]! * x[k]!
@@ -59,5 +66,4 @@ export function solvePositiveDefinite(
     for (let k = i + 1; k < n; k++) sum -= factor[k * n + i]! * x[k]!
     x[i] = sum / factor[i * n + i]!
   }
-  return x
 }

@@ -4,7 +4,9 @@ import { GROUND, type Network, type NetworkElement, type NetworkNode } from '../
 import { turnedAxes, type Matrix3 } from '../../../core/numerics/vector3.ts'
 import type { Vec3 } from '../../../core/project/fields.ts'
 
-const between = (min: number, max: number) => fc.double({ min, max, noNaN: true })
+/** Evenly spread; `fc.double` spreads over exponents, so that most places would fall together. */
+const between = (min: number, max: number) =>
+  fc.integer({ min: 0, max: 1_000_000 }).map((step) => min + ((max - min) * step) / 1_000_000)
 const vector = (min: number, max: number): fc.Arbitrary<Vec3> =>
   fc.tuple(between(min, max), between(min, max), between(min, max))
 

@@ -1,0 +1,9 @@
+import { describe, expect, it } from 'vitest'
+import { curvedMountChecks } from '../../reference/checks/curved-mounts.ts'
+
+describe('rest on curved, packed and levelled mounts agrees with the reference', () => {
+  it.each(curvedMountChecks.map((check) => [check.id, check] as const))('%s', (_, check) => {
+    // 1e-8 of the largest in its list: both sides go on until only rounding is unbalanced
+    expect(Math.abs(check.ours() - check.expected)).toBeLessThanOrEqual(check.tolerance)
+  })
+})
