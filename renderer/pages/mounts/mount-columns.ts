@@ -31,7 +31,7 @@ export function mountColumns(
       kind: 'text',
       key: 'name',
       title: 'Mark',
-      width: '3.5rem',
+      width: '3rem',
       path: 'name',
       get: (mount) => mount.name,
       set: (draft, index, value) => {
@@ -43,7 +43,7 @@ export function mountColumns(
       kind: 'choice',
       key: 'type',
       title: 'Type',
-      width: '7rem',
+      width: '6rem',
       path: 'type',
       options: types.map((type) => ({ value: type.id, label: type.name || type.id })),
       get: (mount) => mount.type,
@@ -58,7 +58,7 @@ export function mountColumns(
       title: axis,
       group: 'Position',
       dimension: 'length',
-      width: '4.5rem',
+      width: '3.75rem',
       path: `position[${position}]`,
       get: (mount) => mount.position[position] ?? 0,
       set: (draft, index, value) => {
@@ -71,7 +71,7 @@ export function mountColumns(
       key: 'tilt',
       title: 'about',
       hint: 'Tilted about',
-      width: '5.25rem',
+      width: '4.75rem',
       group: 'Tilt',
       path: 'tilt',
       options: [
@@ -95,7 +95,7 @@ export function mountColumns(
       hint: 'Tilt angle',
       group: 'Tilt',
       dimension: 'angle',
-      width: '4rem',
+      width: '3.25rem',
       path: 'tilt.angle',
       get: (mount) => mount.tilt?.angle,
       set: (draft, index, value) => {
