@@ -1,4 +1,5 @@
 import type { AnnotationOptions } from 'chartjs-plugin-annotation'
+import { shareOf, valueAtShare } from './axis-share.ts'
 import type { ChartBand, ChartLimit, ChartMark } from './chart-types.ts'
 import type { DrawModel, DrawnAxis } from './draw-model.ts'
 import { placeLabels } from './label-rows.ts'
@@ -66,7 +67,7 @@ function limitsOf(
   const made: Record<string, AnnotationOptions> = {}
   const places = placeLabels(
     limits.map((limit) => ({
-      at: share(model.y.shown(limit.y), model.y) * plot.height + (limit.forbidden === 'below' ? 9 : -9),
+      at: shareOf(model.y.shown(limit.y), model.y) * plot.height + (limit.forbidden === 'below' ? 9 : -9),
       width: FONT_SIZE + 2,
     })),
     PLACES.length,
@@ -93,7 +94,7 @@ function limitsOf(
     }
     if (edge !== y) continue
     const row = places[index]?.row ?? null
-    const across = (share(ends.xMax, model.x) - share(ends.xMin, model.x)) * plot.width
+    const across = (shareOf(ends.xMax, model.x) - shareOf(ends.xMin, model.x)) * plot.width
     const wide = across > limit.label.length * LETTER + 12
     made[`limit-${limit.id}`] = {
       type: 'line',
@@ -152,7 +153,7 @@ function marksOf(
     .map((mark) => ({ mark, x: model.x.shown(mark.x) }))
     .filter(({ x }) => x >= model.x.min && x <= model.x.max)
     .toSorted((a, b) => Number(b.mark.role === 'running') - Number(a.mark.role === 'running'))
-  const pixel = (x: number) => share(x, model.x) * plotWidth
+  const pixel = (x: number) => shareOf(x, model.x) * plotWidth
   const placed = placeLabels(
     inside.map(({ mark, x }) => ({ at: pixel(x), width: mark.label.length * LETTER + 8 })),
     labelRows(marks),
@@ -192,9 +193,5 @@ function marksOf(
 }
 
 function middle(ends: { readonly xMin: number; readonly xMax: number }, axis: DrawnAxis): number {
-  return axis.kind === 'log' ? Math.sqrt(ends.xMin * ends.xMax) : (ends.xMin + ends.xMax) / 2
-}
-
-function share(at: number, { min, max, kind }: DrawnAxis): number {
-  return kind === 'log' ? Math.log(at / min) / Math.log(max / min) : (at - min) / (max - min)
+  return valueAtShare((shareOf(ends.xMin, axis) + shareOf(ends.xMax, axis)) / 2, axis)
 }

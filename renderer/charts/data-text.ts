@@ -1,4 +1,9 @@
+import type { UnitSystem } from '../../core/units/dimensions.ts'
+import { unitLabel } from '../../core/units/format.ts'
+import { factorOf } from '../../core/units/parse.ts'
+import type { ChartAxis, ChartSeries } from './chart-types.ts'
 import { valueAt } from './sample.ts'
+import { withUnit } from './ticks.ts'
 
 export interface DataColumn {
   /** quantity and unit, such as `Support force [N]` */
@@ -25,6 +30,23 @@ export function toTabSeparated(xHeading: string, xFactor: number, columns: reado
     lines.push([plainNumber(place / xFactor), ...cells].join('\t'))
   }
   return lines.join('\n') + '\n'
+}
+
+/** The curves of a chart as text for a spreadsheet, in shown units. */
+export function seriesText(
+  x: ChartAxis,
+  y: ChartAxis,
+  series: readonly ChartSeries[],
+  units: UnitSystem,
+): string {
+  const columns = series.map((entry) => ({
+    heading: withUnit(`${y.title}, ${entry.label}`, unitLabel(y.dimension, units)),
+    x: entry.x,
+    y: entry.y,
+    factor: factorOf(y.dimension, units),
+  }))
+  const heading = withUnit(x.title, unitLabel(x.dimension, units))
+  return toTabSeparated(heading, factorOf(x.dimension, units), columns)
 }
 
 /** Twelve digits: nothing a person could use is lost, binary noise is. */

@@ -33,30 +33,47 @@ export function asIsolation(curves: readonly ChartSeries[]): readonly ChartSerie
 }
 
 /**
- * Force through each mount. Of many mounts the hardest loaded are drawn at first;
- * the key brings in the others.
+ * Force through each mount. Of many mounts the hardest loaded are drawn at first, and the key brings
+ * in the others; with absorbers in place the hardest loaded one is drawn without them too.
  */
-export function mountCurves(project: Project, sweep: Sweep): readonly ChartSeries[] {
-  const peaks = sweep.mountForces.map((force) => force.reduce((most, value) => Math.max(most, value), 0))
-  const drawn = new Set(
-    peaks
-      .map((peak, index) => ({ peak, index }))
-      .toSorted((a, b) => b.peak - a.peak || a.index - b.index)
-      .slice(0, MOUNTS_AT_FIRST)
-      .map(({ index }) => index),
-  )
-  return sweep.mountForces.map((force, index) => {
+export function mountCurves(
+  project: Project,
+  sweep: Sweep,
+  bare: Sweep | null = null,
+): readonly ChartSeries[] {
+  const ranked = sweep.mountForces
+    .map((force, index) => ({ peak: peakOf(force), index }))
+    .toSorted((a, b) => b.peak - a.peak || a.index - b.index)
+  const drawn = new Set(ranked.slice(0, MOUNTS_AT_FIRST).map(({ index }) => index))
+  const nameOf = (index: number) => {
     const mount = project.mounting.placed[index]
-    return {
-      id: `mount-${mount?.id ?? index}`,
-      label: mount ? mountName(project, mount.id) : `mount ${index + 1}`,
-      x: sweep.speed,
-      y: force,
-      role: 'main',
-      dash: index,
-      hidden: !drawn.has(index),
-    }
-  })
+    return mount ? mountName(project, mount.id) : `mount ${index + 1}`
+  }
+  const curves = sweep.mountForces.map((force, index): ChartSeries => ({
+    id: `mount-${project.mounting.placed[index]?.id ?? index}`,
+    label: nameOf(index),
+    x: sweep.speed,
+    y: force,
+    role: 'main',
+    dash: index,
+    hidden: !drawn.has(index),
+  }))
+  const hardest = ranked[0]?.index ?? 0
+  const without = bare?.mountForces[hardest]
+  if (!bare || !without) return curves
+  const compare: ChartSeries = {
+    id: 'hardest-without',
+    label: `${nameOf(hardest)} without absorbers`,
+    x: bare.speed,
+    y: without,
+    role: 'compare',
+    dash: MOUNTS_AT_FIRST + 1,
+  }
+  return [...curves, compare]
+}
+
+function peakOf(curve: Float64Array): number {
+  return curve.reduce((most, value) => Math.max(most, value), 0)
 }
 
 /** Velocity of one point in the three directions, and without absorbers in the direction that moves most. */
@@ -76,9 +93,8 @@ export function velocityCurves(evaluation: Evaluation, index: number): readonly 
   const bare = response.sweepWithoutAbsorbers
   const bareCurves = bare?.pointVelocity[index]
   if (!bare || !bareCurves) return main
-  const peak = (curve: Float64Array) => curve.reduce((most, value) => Math.max(most, value), 0)
   const most = bareCurves
-    .map(peak)
+    .map(peakOf)
     .reduce((best, value, at, all) => (value > (all[best] ?? 0) ? at : best), 0)
   const compare = axes.map((axis, direction): ChartSeries => ({
     id: `velocity-${axis}-without`,

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import { cursorTarget } from '../../../renderer/charts/cursor-keys.ts'
 import { toTabSeparated } from '../../../renderer/charts/data-text.ts'
 import { toDecibels } from '../../../renderer/charts/decibels.ts'
 import { drawModel, type DrawInput } from '../../../renderer/charts/draw-model.ts'
@@ -10,7 +11,7 @@ import { logGrid, logTicks, tickText, withUnit } from '../../../renderer/charts/
 const RPM = (2 * Math.PI) / 60
 
 describe('toDecibels', () => {
-  // SOURCE  definition of a level of a field quantity, ISO 80000-3:2006: 20 lg(x / x0); half the
+  // SOURCE  definition of a level of a field quantity, ISO 80000-3:2006 (from memory): 20 lg(x / x0); half the
   // amplitude is 20 lg 0.5 = -6.0206 dB.
   it('gives 20 lg of the amplitude ratio', () => {
     expect(toDecibels(10, 1)).toBeCloseTo(20, 12)
@@ -152,5 +153,23 @@ describe('drawModel', () => {
     expect([model.x.min, model.x.max]).toEqual([expect.closeTo(200, 9), expect.closeTo(300, 9)])
     expect(model.y.max).toBe(9)
     expect(model.curves[0]?.points.length).toBeLessThan(15)
+  })
+})
+
+describe('cursor keys', () => {
+  const domain = Float64Array.of(0, 10, 20, 30, 40)
+  it('go to neighbouring computed places, from between them too', () => {
+    expect(cursorTarget('ArrowRight', domain, 20)).toBe(30)
+    expect(cursorTarget('ArrowLeft', domain, 20)).toBe(10)
+    expect(cursorTarget('ArrowRight', domain, 21)).toBe(30)
+    expect(cursorTarget('ArrowLeft', domain, 21)).toBe(20)
+  })
+  it('stop at the ends', () => {
+    expect(cursorTarget('ArrowRight', domain, 40)).toBe(40)
+    expect(cursorTarget('Home', domain, 20)).toBe(0)
+    expect(cursorTarget('End', domain, 20)).toBe(40)
+  })
+  it('leave other keys alone', () => {
+    expect(cursorTarget('a', domain, 20)).toBeNull()
   })
 })

@@ -92,6 +92,14 @@ describe('curves', () => {
     const shown = mountCurves(fan, many).filter((curve) => curve.hidden !== true)
     expect(shown.map(({ dash }) => dash)).toEqual([0, 1, 2, 3, 4, 5])
   })
+  it('draw the hardest loaded mount without absorbers too', () => {
+    const response = withAbsorber.response
+    const curves = response ? mountCurves(inPlace, response.sweep, response.sweepWithoutAbsorbers) : []
+    expect(curves.length).toBe(7)
+    const peaks = curves.map(({ y }) => Math.max(...y))
+    const hardest = curves[peaks.indexOf(Math.max(...peaks.slice(0, 6)))]
+    expect(curves[6]?.label).toBe(`${hardest?.label} without absorbers`)
+  })
   it('put every crossing on its ray', () => {
     const points = orderCurves(bare.modes ?? [], 200).find(({ id }) => id === 'crossings')
     expect(points?.x.length).toBe(6)
