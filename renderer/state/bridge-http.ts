@@ -30,7 +30,8 @@ export async function httpInvoke<E extends EndpointName>(
       method: 'POST',
       headers: { 'content-type': 'application/json', 'x-stillbed-token': token },
       body,
-      keepalive: document.visibilityState === 'hidden' && body.length < KEEPALIVE_LIMIT,
+      // a save outlives the page: it may be the last thing that the page does
+      keepalive: endpoint === 'shelf:save' && body.length < KEEPALIVE_LIMIT,
     })
     return decode(await response.text()) as Reply<Value<E>> // the host answers by the shared contract
   } catch {

@@ -78,7 +78,9 @@ function fromProblems(problems: readonly Problem[], roots: readonly string[]): S
   const mine = problems.filter((problem) => roots.some((root) => problem.field.startsWith(root)))
   const first = mine[0]
   if (!first) return DONE
-  return incomplete(mine.length === 1 ? first.message : `${first.message} (and ${mine.length - 1} more)`)
+  return incomplete(
+    mine.length === 1 ? first.message : `${first.message.replace(/\.$/, '')} (and ${mine.length - 1} more)`,
+  )
 }
 
 function incomplete(missing: string): StepState {
