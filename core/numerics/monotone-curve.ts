@@ -44,8 +44,8 @@ export function monotoneCurve(points: readonly (readonly [x: number, y: number])
 
 /** Slope at an end from the two nearest intervals; `near` is the one that ends there. */
 function endSlope(nearWidth: number, farWidth: number, near: number, far: number): number {
-  const slope = ((2 * nearWidth + farWidth) * near - nearWidth * far) / (nearWidth + farWidth)
-  return Math.min(Math.max(slope, 0), 3 * near)
+  // with rising secants it stays under twice the near one, well within the region
+  return Math.max(0, ((2 * nearWidth + farWidth) * near - nearWidth * far) / (nearWidth + farWidth))
 }
 
 /**
