@@ -1,6 +1,7 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized for BLOCK by construction */
 import type { AssembledElement } from './assemble.ts'
 import type { SparseRow } from './kinematics.ts'
+import type { Branch } from './network.ts'
 import { combineParts, type ComplexParts } from '../numerics/block-combine.ts'
 import { steadyPart, varies, varyingPart, type Law } from './laws.ts'
 import { BLOCK, type ResponseBlock } from './response.ts'
@@ -35,6 +36,12 @@ export function readForce(
   let written = 0
   for (const { branch, law, row } of branches) {
     if (branch.motion === 'turn') continue
+    const only = onlyAxis(branch.axis)
+    if (only >= 0 && (written & (1 << only)) === 0 && row.indices.length <= 3 && !varies(law)) {
+      writeForce(law, block, branch.axis[only]!, row, target[only]!, at)
+      written |= 1 << only
+      continue
+    }
     readRow(row, block, scratch)
     for (let axis = 0; axis < 3; axis++) {
       const share = branch.axis[axis]!
@@ -51,6 +58,45 @@ export function readForce(
   }
 }
 
+/** The one axis along which a direction lies, or -1. */
+function onlyAxis([x, y, z]: Branch['axis']): number {
+  if (x === 0 && y === 0) return 2
+  if (x === 0 && z === 0) return 1
+  return y === 0 && z === 0 ? 0 : -1
+}
+
+/**
+ * The usual case in one pass over memory: a branch along one axis whose motion depends on at most
+ * three freedoms (a mount between a body and the ground), with a law of k, h and c alone.
+ */
+function writeForce(
+  law: Law,
+  { count, omega, motion: { re: motionRe, im: motionIm } }: ResponseBlock,
+  share: number,
+  { indices, values }: SparseRow,
+  { re, im }: ComplexParts,
+  at: number,
+): void {
+  const steady = steadyPart(law)
+  const stiffness = share * steady.stiffness
+  const hysteretic = share * steady.hysteretic
+  const viscous = share * steady.viscous
+  const terms = indices.length
+  const p = terms > 0 ? indices[0]! * BLOCK : 0
+  const q = terms > 1 ? indices[1]! * BLOCK : 0
+  const r = terms > 2 ? indices[2]! * BLOCK : 0
+  const c = terms > 0 ? values[0]! : 0
+  const d = terms > 1 ? values[1]! : 0
+  const e = terms > 2 ? values[2]! : 0
+  for (let f = 0; f < count; f++) {
+    const a = c * motionRe[p + f]! + d * motionRe[q + f]! + e * motionRe[r + f]!
+    const b = c * motionIm[p + f]! + d * motionIm[q + f]! + e * motionIm[r + f]!
+    const loss = hysteretic + omega[f]! * viscous
+    re[at + f] = stiffness * a - loss * b
+    im[at + f] = stiffness * b + loss * a
+  }
+}
+
 /** target = share · z(omega) · motion, or added to it where something stands there already. */
 function addForce(
   law: Law,
@@ -61,21 +107,18 @@ function addForce(
   at: number,
   more: boolean,
 ): void {
-  const steady = steadyPart(law)
-  const stiffness = share * steady.stiffness
-  const hysteretic = share * steady.hysteretic
-  const viscous = share * steady.viscous
+  const { stiffness, hysteretic, viscous } = steadyPart(law)
   const changing = varies(law)
   for (let f = 0; f < count; f++) {
     let zRe = stiffness
     let zIm = hysteretic + omega[f]! * viscous
     if (changing) {
       const extra = varyingPart(law, omega[f]!)
-      zRe += share * extra.re
-      zIm += share * extra.im
+      zRe += extra.re
+      zIm += extra.im
     }
-    const a = motionRe[f]!
-    const b = motionIm[f]!
+    const a = share * motionRe[f]!
+    const b = share * motionIm[f]!
     re[at + f] = zRe * a - zIm * b + (more ? re[at + f]! : 0)
     im[at + f] = zRe * b + zIm * a + (more ? im[at + f]! : 0)
   }

@@ -76,3 +76,14 @@ export function standardProject(): Project {
   }
   return readProject(input)
 }
+
+/** The same with an isolation that it does not reach: every lever is tried then. */
+export function failingProject(): Project {
+  const project = standardProject()
+  return {
+    ...project,
+    requirements: project.requirements.map((requirement) =>
+      requirement.kind === 'isolation' ? { ...requirement, limit: 0.99 } : requirement,
+    ),
+  }
+}

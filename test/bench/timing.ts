@@ -6,7 +6,7 @@ export interface Timing {
 }
 
 /** Times `work` after `warmUp` runs that let the compiler settle. */
-export function time(work: () => unknown, runs = 9, warmUp = 3): Timing {
+export function time(work: () => unknown, runs = 15, warmUp = 10): Timing {
   for (let i = 0; i < warmUp; i++) work()
   const times = Array.from({ length: runs }, () => {
     const start = performance.now()
