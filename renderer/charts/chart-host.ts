@@ -20,7 +20,6 @@ export interface ChartHost {
   /** @param x, y what stays in place [CSS px]; left out: the middle */
   zoomBy(factor: number, focus?: { readonly x: number; readonly y: number }): void
   panBy(pixels: number): void
-  readonly canvas: HTMLCanvasElement
   destroy(): void
 }
 
@@ -98,7 +97,6 @@ export function createChartHost(canvas: HTMLCanvasElement, callbacks: Callbacks)
     zoomBy: (factor, focus) =>
       chart?.zoom({ x: factor, y: factor, ...(focus ? { focalPoint: { ...focus } } : {}) }),
     panBy: (pixels) => chart?.pan({ x: pixels }, undefined, 'none'),
-    canvas,
     destroy: () => {
       chart?.destroy()
       chart = null

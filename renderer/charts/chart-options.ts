@@ -11,12 +11,9 @@ export type CurveDataset = ChartDataset<'line', DrawnPoint[]>
 
 export function inkOf(series: ChartSeries, palette: Palette): string {
   switch (series.role) {
-    case 'accent':
-      return palette.accent
     case 'pinned':
       return palette.faint
     case 'compare':
-    case 'reference':
       return palette.soft
     case 'main':
     case 'points':
@@ -25,17 +22,16 @@ export function inkOf(series: ChartSeries, palette: Palette): string {
 }
 
 export function weightOf(series: ChartSeries): number {
-  if (series.role === 'reference') return 1
-  return series.role === 'main' || series.role === 'accent' ? 1.9 : 1.4
+  return series.role === 'main' ? 1.9 : 1.4
 }
 
 /**
- * Lower numbers lie on top. Pinned and reference lines lie behind those that follow the present
+ * Lower numbers lie on top. Pinned lines lie behind those that follow the present
  * inputs; of coinciding curves the sparser dash lies over the fuller one, so that both are seen.
  */
 function drawingOrder({ role, dash }: ChartSeries): number {
   if (role === 'points') return -100
-  return (role === 'pinned' || role === 'reference' ? 100 : 0) - dash
+  return (role === 'pinned' ? 100 : 0) - dash
 }
 
 export function datasetOf(curve: DrawnCurve, palette: Palette): CurveDataset {

@@ -1,7 +1,7 @@
 import type { Dimension } from '../../core/units/dimensions.ts'
 
 /** What a curve stands for; it decides ink and weight, never the dash. */
-export type SeriesRole = 'main' | 'compare' | 'reference' | 'pinned' | 'accent' | 'points'
+export type SeriesRole = 'main' | 'compare' | 'pinned' | 'points'
 
 /** One curve, in SI units (rad/s for shaft speed); x rises. */
 export interface ChartSeries {
@@ -15,8 +15,6 @@ export interface ChartSeries {
   readonly dash: number
   /** left out at first; the legend brings it in */
   readonly hidden?: boolean
-  /** a straight construction line: no value in the readout */
-  readonly silent?: boolean
 }
 
 export type ScaleKind = 'linear' | 'log'

@@ -12,7 +12,7 @@ export function chartSummary(
   limits: readonly ChartLimit[],
   units: UnitSystem,
 ): string {
-  const curves = series.filter((entry) => entry.role !== 'reference' && entry.x.length > 0)
+  const curves = series.filter((entry) => entry.x.length > 0)
   const first = curves[0]
   if (!first) return `${title}: nothing to draw yet.`
   const from = formatQuantity(first.x[0], x.dimension, units)

@@ -62,8 +62,8 @@ export function massTrade(absorber: Absorber, trials: Evaluation): MassTrade | n
   const lightest = results[0]?.network
   if (results.every((result) => result.network !== null)) {
     return {
-      title: 'What more mass buys: worst response of the machine',
-      axis: 'Worst receptance over that of the lightest',
+      title: 'What more mass buys: worst response, against the lightest',
+      axis: 'Relative worst receptance',
       dimension: 'ratio',
       series: [
         curve('peak', 'worst receptance', 0, ({ network }) =>
