@@ -6,6 +6,7 @@ import { fixedPointTuning } from './fixed-points.ts'
 import { hostOf, type Host } from './host.ts'
 import { kindOf, travelShape, unboundedAt, type Kind, type Shape } from './kinds.ts'
 import { barePeak, worstPeak, type Peak } from './peaks.ts'
+import { invalid } from './problems.ts'
 import { shapeMagnitude, type HostAndAbsorber } from './response.ts'
 import type { Receptance } from './receptance-panels.ts'
 import { splitFrequencyRatios } from './running-speed.ts'
@@ -53,9 +54,10 @@ export function designAbsorber(absorber: Absorber, index: number, context: Absor
   const { tuning, problems } = tune(absorber, host, field, receptance, context.runningSpeed)
   if (tuning === null) return { result: null, problems }
   const result = describe(absorber, host, tuning, context.gravity ?? STANDARD_GRAVITY)
-  if (isFinite(result)) return { result, problems }
-  const message = 'these numbers are too far apart to be computed with: check masses, frequencies and damping'
-  return { result: null, problems: [...problems, { field: `${field}.tuning.by`, message, kind: 'invalid' }] }
+  if (allFinite(result)) return { result, problems }
+  const message =
+    'These numbers are too far apart to be computed with: check masses, frequencies and damping.'
+  return { result: null, problems: [...problems, invalid(`${field}.tuning.by`, message)] }
 }
 
 /** On the full network for a mode; of the single freedom itself for a typed host. */
@@ -167,9 +169,9 @@ function atTunedSpeed(host: Host, system: HostAndAbsorber): AbsorberResult['atTu
 }
 
 /** Whether every number in a plain result is finite; null is allowed. */
-function isFinite(value: unknown): boolean {
+function allFinite(value: unknown): boolean {
   if (typeof value === 'number') return Number.isFinite(value)
   if (value instanceof Float64Array) return value.every(Number.isFinite)
-  if (typeof value === 'object' && value !== null) return Object.values(value).every(isFinite)
+  if (typeof value === 'object' && value !== null) return Object.values(value).every(allFinite)
   return true
 }

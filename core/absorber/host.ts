@@ -1,6 +1,7 @@
 import type { Absorber } from '../project/absorber.ts'
 import type { Vec3 } from '../project/fields.ts'
 import type { HostSummary, Mode, Problem } from '../results.ts'
+import { invalid, missing } from './problems.ts'
 
 /** The single freedom on which an absorber is designed. */
 export interface Host extends HostSummary {
@@ -30,9 +31,9 @@ export function hostOf(
   const { host } = absorber
   if (host.kind === 'single') {
     const problems: Problem[] = []
-    if (host.mass === null) problems.push(missing(`${field}.host.mass`, 'give the modal mass of the host'))
+    if (host.mass === null) problems.push(missing(`${field}.host.mass`, 'Give the modal mass of the host.'))
     if (host.frequency === null) {
-      problems.push(missing(`${field}.host.frequency`, 'give the natural frequency of the host'))
+      problems.push(missing(`${field}.host.frequency`, 'Give the natural frequency of the host.'))
     }
     if (host.mass === null || host.frequency === null) return { problems }
     return { host: single(host.mass, host.frequency, host.dampingRatio, host.force ?? 1) }
@@ -40,7 +41,7 @@ export function hostOf(
   if (modes === null || centreOfGravity === null) {
     return {
       problems: [
-        missing(`${field}.host.mode`, 'the host is a mode of the machine, and its modes are not known yet'),
+        missing(`${field}.host.mode`, 'The host is a mode of the machine, and its modes are not known yet.'),
       ],
     }
   }
@@ -48,14 +49,14 @@ export function hostOf(
   if (!mode) {
     return {
       problems: [
-        invalid(`${field}.host.mode`, `there is no mode ${host.mode}: the machine has ${modes.length}`),
+        invalid(`${field}.host.mode`, `There is no mode ${host.mode}: the machine has ${modes.length}.`),
       ],
     }
   }
   if (!(mode.frequency > 0)) {
     return {
       problems: [
-        invalid(`${field}.host.mode`, `mode ${host.mode} is a free motion without a natural frequency`),
+        invalid(`${field}.host.mode`, `Mode ${host.mode} is a free motion without a natural frequency.`),
       ],
     }
   }
@@ -66,7 +67,7 @@ export function hostOf(
       problems: [
         invalid(
           `${field}.host.direction`,
-          `mode ${host.mode} does not move at this point along this direction: choose another point, direction or mode`,
+          `Mode ${host.mode} does not move at this point along this direction: choose another point, direction or mode.`,
         ),
       ],
     }
@@ -94,12 +95,4 @@ function motion(
 function single(mass: number, frequency: number, dampingRatio: number, force: number): Host {
   const omega = 2 * Math.PI * frequency
   return { mass, stiffness: mass * omega * omega, frequency, dampingRatio, omega, force }
-}
-
-function missing(field: string, message: string): Problem {
-  return { field, message, kind: 'missing' }
-}
-
-function invalid(field: string, message: string): Problem {
-  return { field, message, kind: 'invalid' }
 }

@@ -28,11 +28,13 @@ const POINTS = DEGREE + 1
 const TOLERANCE = 1e-10
 const FIRST_PANELS = 12
 const MOST_LEVELS = 14
+/** A receptance that needs more is not smooth at all: rounding, or a table's corners. */
+const MOST_PANELS = 240
 
 /**
  * @param band lowest and highest frequency [Hz], 0 < low < high
  * @returns panels in rising order; the narrowest ones are kept as they are where the curve is rougher
- *   than `MOST_LEVELS` halvings can follow
+ *   than `MOST_LEVELS` halvings or `MOST_PANELS` panels can follow
  */
 export function receptancePanels(receptance: Receptance, band: readonly [number, number]): Panel[] {
   const done: Panel[] = []
@@ -50,6 +52,7 @@ export function receptancePanels(receptance: Receptance, band: readonly [number,
     })
     const sampled = receptance(frequencies)
     const next: [number, number][] = []
+    const mayRefine = level < MOST_LEVELS && done.length + 2 * open.length <= MOST_PANELS
     open.forEach(([low, high], index) => {
       const from = index * POINTS
       const re = sampled.re.subarray(from, from + POINTS)
@@ -59,7 +62,7 @@ export function receptancePanels(receptance: Receptance, band: readonly [number,
       const other = inverse === null ? null : fit(inverse.re, inverse.im)
       const useDirect = other === null || direct.roughness <= other.roughness
       const chosen = useDirect ? direct : other
-      if (chosen.roughness > TOLERANCE && level < MOST_LEVELS) {
+      if (chosen.roughness > TOLERANCE && mayRefine) {
         const middle = (low + high) / 2
         next.push([low, middle], [middle, high])
       } else {

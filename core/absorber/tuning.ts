@@ -7,6 +7,7 @@ import { kindOf, unboundedAt, type Kind } from './kinds.ts'
 import { networkOptimum } from './network-optimum.ts'
 import { hostOptimum } from './optimum.ts'
 import { worstPeak } from './peaks.ts'
+import { caution, invalid, missing } from './problems.ts'
 import type { Receptance } from './receptance-panels.ts'
 import { massForStroke } from './running-speed.ts'
 
@@ -82,14 +83,14 @@ function ownFrequency(
   if (tuning.by === 'speed') {
     const speed = tuning.speed ?? runningSpeed
     if (speed !== null) return { omega: speed * tuning.order, problems: [] }
-    const message = 'give the speed to which it is tuned, or the running speed of the machine'
+    const message = 'Give the speed to which it is tuned, or the running speed of the machine.'
     return { omega: host.omega, problems: [missing(`${field}.tuning.speed`, message)] }
   }
   if (tuning.by === 'given') {
     if (tuning.frequency !== null) return { omega: 2 * Math.PI * tuning.frequency, problems: [] }
     return {
       omega: host.omega,
-      problems: [missing(`${field}.tuning.frequency`, "give the absorber's own frequency on a fixed base")],
+      problems: [missing(`${field}.tuning.frequency`, "Give the absorber's own frequency on a fixed base.")],
     }
   }
   return { omega: host.omega, problems: [] }
@@ -100,26 +101,26 @@ function massOf(absorber: Absorber, host: Host, field: string, omega: number): n
   switch (size.by) {
     case 'ratio':
       if (size.ratio === null)
-        return missing(`${field}.size.ratio`, 'give the absorber mass over the host mass')
+        return missing(`${field}.size.ratio`, 'Give the absorber mass over the host mass.')
       return size.ratio * host.mass
     case 'mass':
-      return size.mass ?? missing(`${field}.size.mass`, 'give the absorber mass')
+      return size.mass ?? missing(`${field}.size.mass`, 'Give the absorber mass.')
     case 'stroke': {
       if (tuning.by !== 'speed') {
         return invalid(
           `${field}.size.by`,
-          'the travel at one speed sets the mass only when it is tuned to a speed',
+          'The travel at one speed sets the mass only when it is tuned to a speed.',
         )
       }
       if (absorber.host.kind !== 'single') {
         return invalid(
           `${field}.size.by`,
-          'the travel sets the mass only for a typed host whose force is known',
+          'The travel sets the mass only for a typed host whose force is known.',
         )
       }
-      if (strokeLimit === null) return missing(`${field}.strokeLimit`, 'give the largest travel allowed')
+      if (strokeLimit === null) return missing(`${field}.strokeLimit`, 'Give the largest travel allowed.')
       if (absorber.host.force === null || absorber.host.force === 0) {
-        return missing(`${field}.host.force`, 'give the harmonic force on the host at the tuned speed')
+        return missing(`${field}.host.force`, 'Give the harmonic force on the host at the tuned speed.')
       }
       const stiffness = host.mass * (host.omega - omega) * (host.omega + omega)
       const damping = 2 * host.dampingRatio * host.mass * host.omega * omega
@@ -128,7 +129,7 @@ function massOf(absorber: Absorber, host: Host, field: string, omega: number): n
       if (mass > 0) return mass
       return invalid(
         `${field}.strokeLimit`,
-        'the damping alone keeps the travel within this limit: no mass follows',
+        'The damping alone keeps the travel within this limit: no mass follows.',
       )
     }
   }
@@ -149,7 +150,7 @@ function byFixedPoints(
 ): TuningFinding {
   const closed = fixedPointTuning(kind, massRatio)
   if (closed === null) {
-    const message = `no closed form exists for this objective at a mass ratio of ${short(massRatio)}: choose a smaller mass or the computed optimum`
+    const message = `No closed form exists for this objective at a mass ratio of ${short(massRatio)}: choose a smaller mass or the computed optimum.`
     return { tuning: null, problems: [invalid(`${field}.tuning.objective`, message)] }
   }
   const { frequencyRatio, dampingRatio } = closed
@@ -159,7 +160,7 @@ function byFixedPoints(
     const excess =
       (worstPeak(kind, system).height ?? 0) / hostOptimum(kind, massRatio, host.dampingRatio).peak - 1
     if (excess > WORTH_A_WORD) {
-      const message = `the closed form takes the host as undamped; its peak is ${short(100 * excess)} % above the least possible, which the computed optimum reaches`
+      const message = `The closed form takes the host as undamped; its peak is ${short(100 * excess)} % above the least possible, which the computed optimum reaches.`
       problems.push(caution(`${field}.tuning.by`, message))
     }
   }
@@ -170,17 +171,17 @@ function byMinimax(kind: Kind, host: Host, mass: number, massRatio: number, fiel
   const unbounded = unboundedAt(kind, host.dampingRatio)
   if (unbounded !== null) {
     const where = unbounded === 'zero' ? 'as the speed falls to zero' : 'with rising speed'
-    const message = `this response to this excitation grows without limit ${where}, so it has no least worst peak: choose another response or the closed form`
+    const message = `This response to this excitation grows without limit ${where}, so it has no least worst peak: choose another response or the closed form.`
     return { tuning: null, problems: [invalid(`${field}.tuning.objective`, message)] }
   }
   const found = hostOptimum(kind, massRatio, host.dampingRatio)
   const problems: Problem[] = []
   if (found.peak <= found.floor * AT_FLOOR) {
     const message =
-      'the largest value is the one far below or far above resonance, which no absorber lowers: this absorber does little here'
+      'The largest value is the one far below or far above resonance, which no absorber lowers: this absorber does little here.'
     problems.push(caution(`${field}.tuning.by`, message))
   } else if (!found.converged) {
-    const message = `the search for the least worst peak did not settle (after ${found.iterations} steps): look at the curve before using it`
+    const message = `The search for the least worst peak did not settle (after ${found.iterations} steps): look at the curve before using it.`
     problems.push(caution(`${field}.tuning.by`, message))
   }
   const { frequencyRatio, dampingRatio } = found
@@ -196,25 +197,25 @@ function byNetwork(
   field: string,
 ): TuningFinding {
   const problems: Problem[] = []
-  if (lowest === null) problems.push(missing(`${field}.tuning.lowest`, 'give the lower end of the band'))
-  if (highest === null) problems.push(missing(`${field}.tuning.highest`, 'give the upper end of the band'))
+  if (lowest === null) problems.push(missing(`${field}.tuning.lowest`, 'Give the lower end of the band.'))
+  if (highest === null) problems.push(missing(`${field}.tuning.highest`, 'Give the upper end of the band.'))
   if (lowest === null || highest === null) return { tuning: null, problems }
   if (!(highest > lowest)) {
-    const message = 'the upper end of the band must lie above its lower end'
+    const message = 'The upper end of the band must lie above its lower end.'
     return { tuning: null, problems: [invalid(`${field}.tuning.highest`, message)] }
   }
   if (receptance === null) {
-    const message = 'the machine on its mounts is not known yet, so there is nothing to compute the band on'
+    const message = 'The machine on its mounts is not known yet, so there is nothing to compute the band on.'
     return { tuning: null, problems: [missing(`${field}.tuning.by`, message)] }
   }
   const found = networkOptimum(receptance, mass, [lowest, highest])
   if (found === null) {
-    const message = 'the attachment does not move along this direction in this band'
+    const message = 'The attachment does not move along this direction in this band.'
     return { tuning: null, problems: [invalid(`${field}.host.direction`, message)] }
   }
   if (!found.converged) {
     const message =
-      'the search for the least worst receptance did not settle: the band may hold no resonance that this absorber can lower'
+      'The search for the least worst receptance did not settle: the band may hold no resonance that this absorber can lower.'
     problems.push(caution(`${field}.tuning.by`, message))
   }
   const { omega, dampingRatio, peak, peakAt, peakWithout } = found
@@ -231,16 +232,4 @@ function byNetwork(
 
 function short(value: number): string {
   return String(Number(value.toPrecision(3)))
-}
-
-function missing(field: string, message: string): Problem {
-  return { field, message, kind: 'missing' }
-}
-
-function invalid(field: string, message: string): Problem {
-  return { field, message, kind: 'invalid' }
-}
-
-function caution(field: string, message: string): Problem {
-  return { field, message, kind: 'caution' }
 }
