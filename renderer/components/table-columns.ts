@@ -1,3 +1,4 @@
+import { InputError } from '../../core/errors.ts'
 import type { Project } from '../../core/project/project.ts'
 import type { Dimension, UnitSystem } from '../../core/units/dimensions.ts'
 import { editableNumber } from '../../core/units/format.ts'
@@ -121,4 +122,39 @@ export function writeCell<R>(
   }
   column.set(draft, index, parseQuantity(text, column.dimension, units, column.title))
   return true
+}
+
+/**
+ * Writes a pasted block into the draft from one cell on.
+ * @param add appends a row for lines beyond the last; without it they are cut off
+ * @returns what was not taken and why, in words
+ */
+export function writeBlock<R>(
+  draft: Project,
+  rows: readonly R[],
+  columns: readonly Column<R>[],
+  cells: readonly (readonly string[])[],
+  from: { readonly row: number; readonly column: number },
+  units: UnitSystem,
+  add?: (draft: Project) => void,
+): readonly string[] {
+  const refused: string[] = []
+  for (const [down, line] of cells.entries()) {
+    const index = from.row + down
+    if (index >= rows.length) {
+      if (!add) break
+      add(draft)
+    }
+    for (const [right, text] of line.entries()) {
+      const column = columns[from.column + right]
+      if (!column) break
+      try {
+        writeCell(draft, index, rows[index], column, text, units)
+      } catch (error) {
+        if (!(error instanceof InputError)) throw error
+        refused.push(`“${text}” in ${column.title}: ${error.allowed}`)
+      }
+    }
+  }
+  return refused
 }

@@ -2,7 +2,14 @@ import { describe, expect, it } from 'vitest'
 import { InputError } from '../../../core/errors.ts'
 import { blankProject } from '../../../core/project/create.ts'
 import type { ObservedPoint } from '../../../core/project/machine.ts'
-import { copyBlock, parseBlock, writeCell, type Column } from '../../../renderer/components/table-columns.ts'
+import {
+  copyBlock,
+  parseBlock,
+  writeBlock,
+  writeCell,
+  type Column,
+} from '../../../renderer/components/table-columns.ts'
+import { extendBlock, groupColumns, neighbour } from '../../../renderer/components/table-moves.ts'
 
 const POINTS: ObservedPoint[] = [
   { id: 'a', name: 'Drive end', position: [0.1, 0, 0] },
@@ -63,5 +70,57 @@ describe('blocks of cells', () => {
     expect(writeCell(project, 0, POINTS[0], x, '', 'SI')).toBe(false)
     expect(() => writeCell(project, 1, POINTS[1], x, 'wide', 'SI')).toThrow(InputError)
     expect(project.machine.points[1]?.position[0]).toBe(0.25)
+  })
+})
+
+describe('a pasted block', () => {
+  const add = (project: ReturnType<typeof draft>) =>
+    project.machine.points.push({ id: `p${project.machine.points.length}`, name: '', position: [0, 0, 0] })
+  const cells = [
+    ['One', '10'],
+    ['Two', 'wide'],
+    ['Three', '30', 'beyond', 'the table'],
+  ]
+
+  it('goes on into new rows, and says which cells it could not fill', () => {
+    const project = draft()
+    const refused = writeBlock(project, POINTS, COLUMNS, cells, { row: 0, column: 0 }, 'SI', add)
+    expect(project.machine.points.map((point) => [point.name, point.position[0]])).toEqual([
+      ['One', 0.01],
+      ['Two', 0.25],
+      ['Three', 0.03],
+    ])
+    expect(refused).toEqual(['“wide” in x: enter a number, for example 25 mm'])
+  })
+
+  it('is cut where the table cannot grow', () => {
+    const project = draft()
+    writeBlock(project, POINTS, COLUMNS, cells, { row: 1, column: 0 }, 'SI')
+    expect(project.machine.points.map((point) => point.name)).toEqual(['Drive end', 'One'])
+  })
+})
+
+describe('moving in a table', () => {
+  it('skips computed cells sideways and stays at the edge', () => {
+    expect(neighbour({ row: 0, column: 0 }, [1, 0], 2, COLUMNS)).toEqual({ row: 1, column: 0 })
+    expect(neighbour({ row: 1, column: 0 }, [1, 0], 2, COLUMNS)).toEqual({ row: 1, column: 0 })
+    expect(neighbour({ row: 0, column: 1 }, [0, 1], 2, COLUMNS)).toEqual({ row: 0, column: 1 })
+  })
+
+  it('extends a block from its fixed corner, back through it to the other side', () => {
+    const anchor = { row: 1, column: 1 }
+    const down = extendBlock(null, anchor, [1, 0], 4, 3)
+    expect(down).toEqual({ top: 1, bottom: 2, left: 1, right: 1 })
+    const back = extendBlock(extendBlock(down, anchor, [-1, 0], 4, 3), anchor, [-1, 0], 4, 3)
+    expect(back).toEqual({ top: 0, bottom: 1, left: 1, right: 1 })
+    expect(extendBlock(back, anchor, [-1, 0], 4, 3)).toEqual(back)
+  })
+
+  it('puts one heading over neighbours of a group', () => {
+    const grouped = COLUMNS.map((column, index) => (index === 0 ? column : { ...column, group: 'At rest' }))
+    expect(groupColumns(grouped)).toEqual([
+      { title: '', span: 1 },
+      { title: 'At rest', span: 2 },
+    ])
   })
 })
