@@ -16,7 +16,7 @@ export function partColumns(): Column<MachinePart>[] {
       kind: 'text',
       key: 'name',
       title: 'Part',
-      width: '8rem',
+      width: '7rem',
       path: 'name',
       get: (part) => part.name,
       set: (draft, index, value) => {
@@ -35,7 +35,7 @@ export function partColumns(): Column<MachinePart>[] {
       key: 'mass',
       title: 'Mass',
       dimension: 'mass',
-      width: '5rem',
+      width: '3.5rem',
       path: 'mass',
       get: (part) => part.mass,
       set: (draft, index, value) => {
@@ -50,7 +50,7 @@ export function partColumns(): Column<MachinePart>[] {
       hint: `Centre ${axis}`,
       group: 'Centre',
       dimension: 'length',
-      width: '4.5rem',
+      width: '3.25rem',
       path: `centre[${position}]`,
       get: (part) => part.centre[position] ?? 0,
       set: (draft, index, value) => {
@@ -65,7 +65,7 @@ export function partColumns(): Column<MachinePart>[] {
       hint: `Size along ${axis}`,
       group: 'Size of a box',
       dimension: 'length',
-      width: '4.5rem',
+      width: '3.25rem',
       path: `size[${position}]`,
       get: (part) => (part.shape === 'box' ? part.size[position] : undefined),
       set: (draft, index, value) => {
@@ -78,7 +78,7 @@ export function partColumns(): Column<MachinePart>[] {
       key: 'axis',
       title: 'Axis',
       hint: 'Axis of the cylinder',
-      width: '3.75rem',
+      width: '3rem',
       group: 'Cylinder',
       path: 'axis',
       options: AXES.map((axis) => ({ value: axis, label: axis })),
@@ -96,7 +96,7 @@ export function partColumns(): Column<MachinePart>[] {
       hint: key === 'diameter' ? 'Diameter' : 'Length along the axis',
       group: 'Cylinder',
       dimension: 'length',
-      width: '4.5rem',
+      width: '3.25rem',
       path: key,
       get: (part) => (part.shape === 'cylinder' ? part[key] : undefined),
       set: (draft, index, value) => {
