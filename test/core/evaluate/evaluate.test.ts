@@ -184,6 +184,34 @@ describe('overall values', () => {
     )
   })
 
+  it('are the same in the sweep as in the full response at that speed', () => {
+    const project = sketchProject({
+      places: CORNERS,
+      more: { sources: [push(1, 80, [0, 1, 1]), push(2, 50, [1, 0, 0])], absorbers: [absorber()] },
+    })
+    const points = [{ id: 'p', name: '', position: [0.4, -0.3, 0.6] as [number, number, number] }]
+    const { response } = evaluate({ ...project, machine: { ...project.machine, points } })
+    const [sweep, full] = [response?.sweep, response?.atSpeeds[0]]
+    const at = sweep?.speed.indexOf(100) ?? -1
+    const shown = [
+      sweep?.supportForce,
+      ...(sweep?.mountForces ?? []),
+      ...(sweep?.pointVelocity.flat() ?? []),
+      ...(sweep?.strokes ?? []),
+    ].map((curve) => curve?.[at])
+    const expected = [
+      full?.supportForce,
+      ...(full?.mountForces ?? []),
+      ...(full?.pointVelocity.flat() ?? []),
+      ...(full?.strokes ?? []),
+    ]
+    expect(shown).toHaveLength(9)
+    shown.forEach((value, i) => {
+      // both ways add the same terms in another order
+      expect((value ?? NaN) / (expected[i] ?? NaN)).toBeCloseTo(1, 12)
+    })
+  })
+
   it('add sources of one order with their phases', () => {
     const against = { ...push(1, 80, up), id: 'against', phase: Math.PI }
     const { response } = run({ places: CORNERS, more: { sources: [push(1, 80, up), against] } })

@@ -23,8 +23,8 @@ describe('withGeometricStiffness', () => {
           from: { node: 'ground', position: pivot },
           to: { node: 'machine', position: pivot },
           branches: [
-            ...([0, 1, 2] as const).map((i) => spring(unit(i), 1e13, 'shift')),
-            ...([0, 1, 2] as const).map((i) => spring(unit(i), turning, 'turn')),
+            ...([0, 1, 2] as const).map((i) => branch(unit(i), 1e13, 'shift')),
+            ...([0, 1, 2] as const).map((i) => branch(unit(i), turning, 'turn')),
           ],
         },
       ],
@@ -113,6 +113,48 @@ describe('withGeometricStiffness', () => {
   })
 })
 
+describe('a body that carries another one', () => {
+  it('is overturned by what it carries as well as by its own weight', () => {
+    // SOURCE two bodies on one another through a rigid joint are one inverted pendulum: as above
+    const [turning, stiff] = [9000, 1e13]
+    const lower = { ...body(100, [0, 0, 0.4], [5, 5, 5]), id: 'lower' }
+    const upper = body(60, [0, 0, 1.1], [3, 3, 3])
+    const joint = (
+      id: string,
+      from: string,
+      to: string,
+      height: number,
+      spring: (i: 0 | 1 | 2) => number,
+    ) => ({
+      id,
+      from: { node: from, position: [0, 0, height] as const },
+      to: { node: to, position: [0, 0, height] as const },
+      branches: [
+        ...([0, 1, 2] as const).map((i) => branch(unit(i), stiff, 'shift')),
+        ...([0, 1, 2] as const).map((i) => branch(unit(i), spring(i), 'turn')),
+      ],
+    })
+    const system = assemble({
+      nodes: [GROUND, lower, upper],
+      elements: [
+        joint('foot', 'ground', 'lower', 0, () => turning),
+        joint('joint', 'lower', 'machine', 0.8, () => stiff),
+      ],
+    })
+    const weights = [lower, upper].map(({ id, centre, mass }) => ({
+      at: { node: id, position: centre },
+      force: [0, 0, -mass * GRAVITY] as const,
+    }))
+    const state = staticEquilibrium(system, weights)
+    if (state === null) throw new Error('it stands')
+    const modes = undampedModes(withGeometricStiffness(system, endLoads(system, state.forces)))
+    const moment = GRAVITY * (100 * 0.4 + 60 * 1.1)
+    const expected = (turning - moment) / (5 + 100 * 0.4 ** 2 + 3 + 60 * 1.1 ** 2)
+    // rounding against the stiff joints
+    expect((modes?.omegaSquared[0] ?? NaN) / expected).toBeCloseTo(1, 3)
+  })
+})
+
 describe('staticEquilibrium', () => {
   it('says null where nothing resists a motion', () => {
     const network: Network = {
@@ -141,6 +183,6 @@ function unit(i: 0 | 1 | 2): Vec3 {
   return scale([i === 0 ? 1 : 0, i === 1 ? 1 : 0, i === 2 ? 1 : 0], 1)
 }
 
-function spring(axis: Vec3, stiffness: number, motion: 'shift' | 'turn') {
+function branch(axis: Vec3, stiffness: number, motion: 'shift' | 'turn') {
   return { axis, motion, law: { kind: 'springDamper', stiffness, lossFactor: 0, viscous: 0 } } as const
 }
