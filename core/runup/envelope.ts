@@ -1,6 +1,6 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
-import { refill, type March } from './march.ts'
-import { evaluateSignal, loadSignal, sample, signalWork, type SignalWork } from './signal.ts'
+import type { March } from './march.ts'
+import { evaluateSignal, fillSignal, loadSignal, sample, signalWork, type SignalWork } from './signal.ts'
 import { speedsAt } from './speed-course.ts'
 import type { Watch } from './watch.ts'
 
@@ -31,8 +31,7 @@ interface Top {
 export function envelopeOf(march: March, watch: Watch, top: Top, samples: number): Curve {
   const { plan } = march
   const signal = signalWork(march)
-  const scale = new Float64Array(4).fill(top.value)
-  const slot = sample()
+  const slot = sample(march.loads.length)
   const time: number[] = []
   const value: number[] = []
   const put = (panel: number, x: number) => {
@@ -41,8 +40,8 @@ export function envelopeOf(march: March, watch: Watch, top: Top, samples: number
     value.push(slot.value[watch.axes.length === 1 ? 0 : watch.axes.length]!)
   }
   for (let panel = 0; panel < plan.count; panel++) {
-    for (let o = 0; o < march.loads.length; o++) signal.keep(o, refill(march, o, panel).panel)
-    loadSignal(signal, watch, scale)
+    fillSignal(signal, panel, watch.moves)
+    loadSignal(signal, watch, top.value)
     const count = samplesFor(signal, watch, top.value)
     for (let i = 0; i < count; i++) {
       const x = -1 + (2 * i) / count
@@ -65,7 +64,7 @@ function samplesFor(signal: SignalWork, watch: Watch, peak: number): number {
   const objective = watch.axes.length === 1 ? 0 : watch.axes.length
   let beats = 0
   for (let o = 0; o < signal.orders; o++) {
-    const first = o * signal.panels[o]!.count
+    const first = o * signal.march.poles.count
     for (let v = first; v < first + signal.vibrations[o]!; v++) {
       if (signal.weightSize[v * 4 + objective]! < VISIBLE * peak) continue
       beats = Math.max(beats, Math.abs(signal.kappaIm[v]!) / Math.PI)

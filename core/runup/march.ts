@@ -1,7 +1,8 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
 import type { Poles } from '../network/poles.ts'
-import { fillPanel, panelEnd, panelWork, type PanelWork, type StateLoad } from './panel.ts'
+import { fillPanel, forcedModes, panelEnd, panelWork, TERMS, type PanelWork } from './panel.ts'
 import type { PanelPlan } from './panel-plan.ts'
+import type { StateLoad } from './state-load.ts'
 
 /** The states at the begin of every panel, for every order, and bounds of their size over it. */
 export interface March {
@@ -11,36 +12,41 @@ export interface March {
   /** y exp(-i order phase): order o, panel p, state j at ((o (panels + 1)) + p) count + j */
   readonly stateRe: Float64Array
   readonly stateIm: Float64Array
-  /** largest |y| over the panel: order o, panel p, state j at (o panels + p) count + j */
-  readonly bound: Float64Array
+  /** bounds over the panel: forced motion of mode r at (o panels + p) modes + r, free vibration of state j at (o panels + p) count + j */
+  readonly displacement: Float64Array
+  readonly velocity: Float64Array
+  readonly free: Float64Array
   /** share of a steady motion that the cut of the series may have cost, summed over the panels */
   readonly cut: number
-  readonly work: PanelWork
 }
 
 export const stateAt = ({ plan, poles }: March, order: number, panel: number): number =>
   (order * (plan.count + 1) + panel) * poles.count
 
-export const boundAt = ({ plan, poles }: March, order: number, panel: number): number =>
-  (order * plan.count + panel) * poles.count
-
 /**
  * Takes the states through the whole course, panel by panel.
+ * @param velocity whether anything watched depends on velocities
  * @returns null when the motion it starts from has no bound: a resonance without damping at the first speed
  */
-export function marchThrough(plan: PanelPlan, poles: Poles, loads: readonly StateLoad[]): March | null {
-  const { count } = poles
+export function marchThrough(
+  plan: PanelPlan,
+  poles: Poles,
+  loads: readonly StateLoad[],
+  velocity: boolean,
+): March | null {
+  const { count, modes } = poles
   const states = loads.length * (plan.count + 1) * count
-  const work = panelWork(count)
+  const work = panelWork(poles)
   const march = {
     plan,
     poles,
     loads,
     stateRe: new Float64Array(states),
     stateIm: new Float64Array(states),
-    bound: new Float64Array(loads.length * plan.count * count),
+    displacement: new Float64Array(loads.length * plan.count * modes),
+    velocity: new Float64Array(loads.length * plan.count * modes),
+    free: new Float64Array(loads.length * plan.count * count),
     cut: 0,
-    work,
   }
   const first = plan.course.pieces[0]?.from ?? 0
   for (let o = 0; o < loads.length; o++) {
@@ -53,18 +59,34 @@ export function marchThrough(plan: PanelPlan, poles: Poles, loads: readonly Stat
     for (let p = 0; p < plan.count; p++) {
       fillPanel(work, plan, p, poles, loads[o]!, march.stateRe, march.stateIm, stateAt(march, o, p))
       panelEnd(work.panel, march.stateRe, march.stateIm, stateAt(march, o, p + 1))
-      march.bound.set(work.panel.bound, boundAt(march, o, p))
+      forcedModes(work, poles, velocity)
+      const { panel } = work
+      const at = o * plan.count + p
+      for (let r = 0; r < modes; r++) {
+        march.displacement[at * modes + r] = boundOf(panel.displacementRe, panel.displacementIm, r * TERMS)
+        if (velocity) march.velocity[at * modes + r] = boundOf(panel.velocityRe, panel.velocityIm, r * TERMS)
+      }
+      for (let j = 0; j < count; j++) {
+        march.free[at * count + j] = Math.hypot(panel.freeRe[j]!, panel.freeIm[j]!)
+      }
       march.cut += work.panel.cut[0]!
     }
   }
   return march
 }
 
-/** Fills the march's work panel for a panel and order once more. */
-export function refill(march: March, order: number, panel: number): PanelWork {
-  const { work, plan, poles, loads, stateRe, stateIm } = march
+/** No power series is larger than the sum of its coefficients on -1 to 1. */
+function boundOf(re: Float64Array, im: Float64Array, at: number): number {
+  let sum = 0
+  for (let k = at; k < at + TERMS; k++) sum += Math.sqrt(re[k]! * re[k]! + im[k]! * im[k]!)
+  return sum
+}
+
+/** Fills a panel's motion for an order once more. */
+export function refill(march: March, order: number, panel: number, work: PanelWork, velocity: boolean): void {
+  const { plan, poles, loads, stateRe, stateIm } = march
   fillPanel(work, plan, panel, poles, loads[order]!, stateRe, stateIm, stateAt(march, order, panel))
-  return work
+  forcedModes(work, poles, velocity)
 }
 
 /** The states at a speed that has been the same for ever: force / (i w - lambda), w = order · speed. */

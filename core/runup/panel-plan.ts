@@ -21,10 +21,10 @@ export interface PanelPlan {
   readonly complete: boolean
 }
 
-/** By how much the phase may bend over a panel [rad]: exp(i bend x²) is then cut at 1e-12. */
+/** By how much the phase may bend over a panel [rad]: exp(i bend x²) is then cut at 3e-11. */
 const BEND = 0.4
 /** Last terms of the speed's own series against its first. */
-const SPEED_TAIL = 1e-12
+const SPEED_TAIL = 1e-10
 const MOST_PANELS = 40_000
 
 /**
@@ -104,7 +104,7 @@ function isSmooth(
   let bend = 0
   for (let k = 1; k <= DEGREE; k++) bend += (order * half * Math.abs(series[k]!)) / (k + 1)
   const tail = Math.abs(series[DEGREE]!) + Math.abs(series[DEGREE - 1]!)
-  return bend <= 1.2 * BEND && order * half * tail <= SPEED_TAIL * 10
+  return bend <= 1.2 * BEND && order * half * tail <= SPEED_TAIL
 }
 
 /**

@@ -1,23 +1,13 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
 import type { Poles } from '../network/poles.ts'
 import { DEGREE, speedSeries, type PanelPlan } from './panel-plan.ts'
+import type { StateLoad } from './state-load.ts'
 
-/** Highest power of a state's own series; exp(2 x) is cut at 1e-17 there. */
-const STATE_DEGREE = 25
+/** Highest power of a state's own series; exp(3.5 x) is cut at 1e-14 there. */
+const STATE_DEGREE = 28
 export const TERMS = STATE_DEGREE + 1
 /** Below this |kappa| a state's series runs upwards from its middle, above it downwards from its end. */
-const SLOW = 2
-
-/** One order's force on every state, each complex: constant + squared · w² + inertial · (w² - i w'), w = order · speed. */
-export interface StateLoad {
-  readonly order: number
-  readonly constantRe: Float64Array
-  readonly constantIm: Float64Array
-  readonly squaredRe: Float64Array
-  readonly squaredIm: Float64Array
-  readonly inertialRe: Float64Array
-  readonly inertialIm: Float64Array
-}
+const SLOW = 3.5
 
 /**
  * The states over one panel for one order, exact but for rounding and the cut of the series. With
@@ -30,12 +20,17 @@ export interface Panel {
   /** P_j: power k at j TERMS + k */
   readonly forcedRe: Float64Array
   readonly forcedIm: Float64Array
+  /** how many powers P_j has */
+  readonly terms: Int32Array
   readonly freeRe: Float64Array
   readonly freeIm: Float64Array
   readonly kappaRe: Float64Array
   readonly kappaIm: Float64Array
-  /** upper bound of |v_j| over the panel */
-  readonly bound: Float64Array
+  /** forced motion of the modes, displacement and velocity: power k of mode r at r TERMS + k */
+  readonly displacementRe: Float64Array
+  readonly displacementIm: Float64Array
+  readonly velocityRe: Float64Array
+  readonly velocityIm: Float64Array
   /** order · rest at the panel's begin and end [rad] */
   readonly phase: Float64Array
   /** size of the series' last terms against their first: what has been cut */
@@ -50,7 +45,7 @@ export interface PanelWork {
   readonly series: readonly (readonly [Float64Array, Float64Array])[]
 }
 
-export function panelWork(count: number): PanelWork {
+export function panelWork({ count, modes }: Poles): PanelWork {
   const make = (size: number) => new Float64Array(size)
   const terms = () => make(DEGREE + 1)
   return {
@@ -58,11 +53,15 @@ export function panelWork(count: number): PanelWork {
       count,
       forcedRe: make(count * TERMS),
       forcedIm: make(count * TERMS),
+      terms: new Int32Array(count),
       freeRe: make(count),
       freeIm: make(count),
       kappaRe: make(count),
       kappaIm: make(count),
-      bound: make(count),
+      displacementRe: make(modes * TERMS),
+      displacementIm: make(modes * TERMS),
+      velocityRe: make(modes * TERMS),
+      velocityIm: make(modes * TERMS),
       phase: make(2),
       cut: make(1),
     },
@@ -206,7 +205,9 @@ function forcedMotion({ panel, series }: PanelWork, load: StateLoad, j: number, 
   }
   const x = panel.kappaRe[j]!
   const y = panel.kappaIm[j]!
-  if (x * x + y * y < SLOW * SLOW) seriesUp(re, im, at, x, y)
+  const slow = x * x + y * y < SLOW * SLOW
+  panel.terms[j] = slow ? TERMS : DEGREE + 1
+  if (slow) seriesUp(re, im, at, x, y)
   else seriesDown(re, im, at, x, y)
 }
 
@@ -242,37 +243,76 @@ function seriesDown(re: Float64Array, im: Float64Array, at: number, x: number, y
     re[at + k] = aboveRe
     im[at + k] = aboveIm
   }
-  for (let k = DEGREE + 1; k < TERMS; k++) re[at + k] = im[at + k] = 0
 }
 
 /** What the forced motion lacks at the panel's begin vibrates freely from there. */
 function freeMotion(panel: Panel, j: number, beginRe: number, beginIm: number): void {
-  const { forcedRe, forcedIm } = panel
+  const { forcedRe, forcedIm, terms } = panel
   const at = j * TERMS
   let re = 0
   let im = 0
-  let bound = 0
-  for (let k = STATE_DEGREE; k >= 0; k--) {
+  for (let k = terms[j]! - 1; k >= 0; k--) {
     const p = forcedRe[at + k]!
     const q = forcedIm[at + k]!
     re = p - re
     im = q - im
-    bound += Math.sqrt(p * p + q * q)
   }
   panel.freeRe[j] = beginRe - re
   panel.freeIm[j] = beginIm - im
-  panel.bound[j] = bound + Math.hypot(beginRe - re, beginIm - im)
+}
+
+/**
+ * Sums the forced motion of the states into that of the modes. In the modes what two states of one
+ * mode do against each other has gone, so that bounds of their size are close.
+ * @param velocity whether velocities are wanted too
+ */
+export function forcedModes({ panel }: PanelWork, poles: Poles, velocity: boolean): void {
+  const { displacementRe, displacementIm, velocityRe, velocityIm } = panel
+  displacementRe.fill(0)
+  displacementIm.fill(0)
+  velocityRe.fill(0)
+  velocityIm.fill(0)
+  for (let r = 0; r < poles.modes; r++) {
+    for (let j = 0; j < poles.count; j++) {
+      const p = poles.shapeRe[r * poles.count + j]!
+      const q = poles.shapeIm[r * poles.count + j]!
+      if (p === 0 && q === 0) continue
+      addSeries(panel, j, p, q, displacementRe, displacementIm, r * TERMS)
+      if (!velocity) continue
+      const x = poles.re[j]!
+      const y = poles.im[j]!
+      addSeries(panel, j, p * x - q * y, p * y + q * x, velocityRe, velocityIm, r * TERMS)
+    }
+  }
+}
+
+function addSeries(
+  { forcedRe, forcedIm, terms }: Panel,
+  j: number,
+  a: number,
+  b: number,
+  re: Float64Array,
+  im: Float64Array,
+  at: number,
+): void {
+  const from = j * TERMS
+  for (let k = 0; k < terms[j]!; k++) {
+    const p = forcedRe[from + k]!
+    const q = forcedIm[from + k]!
+    re[at + k]! += a * p - b * q
+    im[at + k]! += a * q + b * p
+  }
 }
 
 /** States at the panel's end against the true phase, written from `at` on. */
 export function panelEnd(panel: Panel, endRe: Float64Array, endIm: Float64Array, at: number): void {
-  const { forcedRe, forcedIm, count } = panel
+  const { forcedRe, forcedIm, terms, count } = panel
   const turnRe = Math.cos(panel.phase[1]!)
   const turnIm = -Math.sin(panel.phase[1]!)
   for (let j = 0; j < count; j++) {
     let re = 0
     let im = 0
-    for (let k = 0; k < TERMS; k++) {
+    for (let k = 0; k < terms[j]!; k++) {
       re += forcedRe[j * TERMS + k]!
       im += forcedIm[j * TERMS + k]!
     }

@@ -1,7 +1,17 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
-import { boundAt, refill, stateAt, type March } from './march.ts'
-import { evaluateSignal, loadSignal, sample, signalWork, type Sample, type SignalWork } from './signal.ts'
-import { addAmplitudes, objectivesOf, type Watch } from './watch.ts'
+import { amplitudesOfStates, amplitudeWork, objectivesOf } from './amplitude.ts'
+import { crests, crestWork, type CrestWork } from './crest.ts'
+import { stateAt, type March } from './march.ts'
+import {
+  evaluateSignal,
+  fillSignal,
+  loadSignal,
+  sample,
+  signalWork,
+  type Sample,
+  type SignalWork,
+} from './signal.ts'
+import type { Watch, WatchSize } from './watch.ts'
 
 /** The largest value of a watched quantity and where it stands: each direction, then the resultant. */
 export interface Peaks {
@@ -13,7 +23,7 @@ export interface Peaks {
 
 /** What a direction or resultant may still hide above the value found, as a share of it. */
 export const PEAK_TOLERANCE = 1e-5
-/** Intervals no longer than this are not split: a beat that fast has no meaning. */
+/** An interval halved as often as this cannot be told from a point. */
 const DEEPEST = 44
 /** More samples for one quantity in one panel mean that its beats are not worth following. */
 const MOST_SAMPLES = 20_000
@@ -22,8 +32,11 @@ interface Search {
   readonly march: March
   readonly watch: Watch
   readonly signal: SignalWork
+  readonly crest: CrestWork
   readonly best: Peaks
-  readonly slots: readonly Sample[]
+  /** both ends of a panel, then the middle of each interval on the way down; made when first needed */
+  readonly slots: Sample[]
+  /** whether an objective's best has moved in this panel, and how far around it lies open */
   readonly improved: Uint8Array
   readonly width: Float64Array
   readonly tolerance: number
@@ -33,8 +46,7 @@ interface Search {
 
 /**
  * Peaks of every watched quantity over the whole course. Panels whose bound lies below what has been
- * found are passed over; the others are halved until an interval cannot hide more: between two samples
- * a curve exceeds the larger by at most an eighth of its length squared times its curvature.
+ * found are passed over; in the others an interval is split until it cannot hide more than the tolerance.
  * @returns the peaks, and whether every search came to its end
  */
 export function findPeaks(
@@ -43,21 +55,28 @@ export function findPeaks(
   tolerance = PEAK_TOLERANCE,
 ): { readonly peaks: readonly Peaks[]; readonly complete: boolean } {
   const signal = signalWork(march)
-  const searches = watches.map((watch) => newSearch(march, watch, signal, tolerance))
+  const orders = march.loads.length
+  const crest = crestWork(orders)
+  const slots = [sample(orders), sample(orders), sample(orders)]
+  const searches = watches.map((watch) => newSearch(march, watch, signal, crest, slots, tolerance))
   const first = new Set<number>()
+  const scratch = amplitudeWork()
   for (const search of searches) {
-    sampleBegins(search)
+    sampleBegins(search, scratch)
     for (const panel of search.best.panel) first.add(panel)
   }
   let complete = true
   const visit = (panel: number) => {
     let filled = false
     for (const search of searches) {
-      if (!mayExceed(search, panel)) continue
-      if (!filled) {
-        for (let o = 0; o < march.loads.length; o++) signal.keep(o, refill(march, o, panel).panel)
-        filled = true
-      }
+      if (!panelMayExceed(search, panel)) continue
+      if (!filled)
+        fillSignal(
+          signal,
+          panel,
+          watches.some(({ moves }) => moves),
+        )
+      filled = true
       complete = searchPanel(search, panel) && complete
     }
   }
@@ -66,18 +85,26 @@ export function findPeaks(
   return { peaks: searches.map(({ best }) => best), complete }
 }
 
-function newSearch(march: March, watch: Watch, signal: SignalWork, tolerance: number): Search {
+function newSearch(
+  march: March,
+  watch: Watch,
+  signal: SignalWork,
+  crest: CrestWork,
+  slots: Sample[],
+  tolerance: number,
+): Search {
   const objectives = objectivesOf(watch)
   return {
     march,
     watch,
     signal,
+    crest,
     best: {
       value: new Float64Array(objectives),
       panel: new Int32Array(objectives),
       x: new Float64Array(objectives).fill(-1),
     },
-    slots: Array.from({ length: DEEPEST + 3 }, sample),
+    slots,
     improved: new Uint8Array(objectives),
     width: new Float64Array(objectives),
     tolerance,
@@ -87,15 +114,18 @@ function newSearch(march: March, watch: Watch, signal: SignalWork, tolerance: nu
 }
 
 /** A first idea of the peaks from the states that are known anyway. */
-function sampleBegins({ march, watch, best, slots }: Search): void {
+function sampleBegins(
+  { march, watch, best, slots }: Search,
+  scratch: ReturnType<typeof amplitudeWork>,
+): void {
   const { plan, poles, loads, stateRe, stateIm } = march
   const { value } = slots[0]!
   const apart = (plan.count + 1) * poles.count
   for (let panel = 0; panel < plan.count; panel++) {
-    addAmplitudes(
+    amplitudesOfStates(
+      scratch,
       watch,
       loads.length,
-      poles.count,
       apart,
       stateRe,
       stateIm,
@@ -111,19 +141,26 @@ function sampleBegins({ march, watch, best, slots }: Search): void {
   }
 }
 
-function mayExceed({ march, watch, best, tolerance }: Search, panel: number): boolean {
-  const { count } = march.poles
-  const objectives = best.value.length
-  for (let q = 0; q < objectives; q++) {
-    const size = q < watch.axes.length ? watch.axes[q]!.size : watch.size
-    let bound = 0
-    for (let o = 0; o < march.loads.length; o++) {
-      const at = boundAt(march, o, panel)
-      for (let j = 0; j < count; j++) bound += size[j]! * march.bound[at + j]!
-    }
-    if (bound > best.value[q]! * (1 + tolerance)) return true
+function panelMayExceed({ march, watch, best, tolerance }: Search, panel: number): boolean {
+  for (let q = 0; q < best.value.length; q++) {
+    const size = q < watch.axes.length ? watch.axes[q]!.size : watch.all
+    if (panelBound(march, size, panel, watch.moves) > best.value[q]! * (1 + tolerance)) return true
   }
   return false
+}
+
+function panelBound(march: March, size: WatchSize, panel: number, moves: boolean): number {
+  const { modes, count } = march.poles
+  let bound = 0
+  for (let o = 0; o < march.loads.length; o++) {
+    const at = o * march.plan.count + panel
+    for (let r = 0; r < modes; r++) {
+      bound += size.displacement[r]! * march.displacement[at * modes + r]!
+      if (moves) bound += size.velocity[r]! * march.velocity[at * modes + r]!
+    }
+    for (let j = 0; j < count; j++) bound += size.state[j]! * march.free[at * count + j]!
+  }
+  return bound
 }
 
 /** @returns whether nothing was given up */
@@ -131,15 +168,26 @@ function searchPanel(search: Search, panel: number): boolean {
   const { signal, slots, best, improved } = search
   search.panel = panel
   search.samples = 0
-  loadSignal(signal, search.watch, best.value)
+  loadSignal(signal, search.watch, leastThatMatters(best.value))
   improved.fill(0)
-  const begin = slots[DEEPEST + 1]!
-  const end = slots[DEEPEST + 2]!
+  const begin = slots[0]!
+  const end = slots[1]!
   take(search, -1, begin, 2)
   take(search, 1, end, 2)
   const complete = split(search, -1, begin, 1, end, 0)
   for (let q = 0; q < improved.length; q++) if (improved[q] === 1) polish(search, q)
   return complete
+}
+
+/** The smallest of the peaks, but a direction that hardly moves need not be as exact as the others. */
+function leastThatMatters(values: Float64Array): number {
+  let least = Infinity
+  let most = 0
+  for (const value of values) {
+    least = Math.min(least, value)
+    most = Math.max(most, value)
+  }
+  return Math.max(least, 1e-3 * most)
 }
 
 function take(search: Search, x: number, slot: Sample, width: number): void {
@@ -157,13 +205,14 @@ function take(search: Search, x: number, slot: Sample, width: number): void {
 }
 
 function split(search: Search, a: number, atA: Sample, b: number, atB: Sample, depth: number): boolean {
-  if (!intervalMayExceed(search, b - a, atA, atB)) return true
+  const share = crestWithin(search, b - a, atA, atB)
+  if (share === 0) return true
   if (depth >= DEEPEST || search.samples > MOST_SAMPLES) return false
-  const middle = (a + b) / 2
-  const slot = search.slots[depth]!
-  take(search, middle, slot, (b - a) / 2)
-  // the side with the larger end first: what it finds spares the other
+  const middle = a + share * (b - a)
+  const slot = (search.slots[depth + 2] ??= sample(search.signal.orders))
+  take(search, middle, slot, Math.min(share, 1 - share) * (b - a))
   const last = search.best.value.length - 1
+  // the side with the larger end first: what it finds spares the other
   if (atA.value[last]! > atB.value[last]!) {
     const left = split(search, a, atA, middle, slot, depth + 1)
     return split(search, middle, slot, b, atB, depth + 1) && left
@@ -172,23 +221,27 @@ function split(search: Search, a: number, atA: Sample, b: number, atB: Sample, d
   return split(search, a, atA, middle, slot, depth + 1) && right
 }
 
-function intervalMayExceed(
-  { best, signal, tolerance }: Search,
-  length: number,
-  atA: Sample,
-  atB: Sample,
-): boolean {
+/** Where to split an interval, as a share of its length; 0 when it cannot hold more than has been found. */
+function crestWithin(search: Search, length: number, atA: Sample, atB: Sample): number {
+  const { best, signal, tolerance, crest } = search
   const eighth = (length * length) / 8
+  const left = length ** 4 / 384
+  crests(crest, signal, atA, atB, length)
+  let share = 0
+  let most = 1 + tolerance
   for (let q = 0; q < best.value.length; q++) {
-    const forcedBend = eighth * signal.curvature[q]!
-    const total = Math.max(atA.value[q]!, atB.value[q]!) + forcedBend + eighth * atA.freeCurvature[q]!
-    const apart = Math.max(atA.forced[q]!, atB.forced[q]!) + forcedBend + atA.free[q]!
-    if (Math.min(total, apart) > best.value[q]! * (1 + tolerance)) return true
+    const together = crest.bound[q]! + left * (signal.fourth[q]! + atA.freeFourth[q]!)
+    const apart = Math.max(atA.forced[q]!, atB.forced[q]!) + eighth * signal.second[q]! + atA.free[q]!
+    const excess = Math.min(together, apart) / best.value[q]!
+    if (!(excess > most)) continue
+    most = excess
+    // where the cubic says little the crest's place is a guess, and half is safer
+    share = crest.bound[q]! > 0.5 * together ? Math.min(0.9, Math.max(0.1, crest.at[q]!)) : 0.5
   }
-  return false
+  return share
 }
 
-/** Moves a peak onto the top of the curve through three samples, twice. */
+/** Moves a peak onto the top of the curve through three samples, closer each time. */
 function polish(search: Search, q: number): void {
   const { best, signal, slots } = search
   if (best.panel[q] !== search.panel) return
@@ -197,8 +250,7 @@ function polish(search: Search, q: number): void {
     evaluateSignal(signal, x, slot)
     return slot.value[q]!
   }
-  // the tolerance tells how wide the top is that has been found
-  let step = Math.min(search.width[q]!, 0.25)
+  let step = Math.min(search.width[q]!, 0.05)
   for (let round = 0; round < 3; round++) {
     const x = Math.min(1 - step, Math.max(-1 + step, best.x[q]!))
     const left = at(x - step)

@@ -7,8 +7,8 @@ import { polesOf, type Poles } from '../network/poles.ts'
 import { summariseMass } from '../project/mass.ts'
 import type { Project } from '../project/project.ts'
 import type { AbsorberResult, MassSummary, Problem } from '../results.ts'
-import type { StateLoad } from './panel.ts'
-import { stateLoad } from './watch.ts'
+import { stateLoad, type StateLoad } from './state-load.ts'
+import type { Modal } from './watch.ts'
 
 /** A project's network with all that stands on it and all that excites it. */
 export interface Prepared {
@@ -41,7 +41,7 @@ export function prepare(
 export function firstOrder(
   observed: Observed,
   loads: readonly SourceLoad[],
-): { readonly poles: Poles; readonly orders: readonly StateLoad[] } | null {
+): { readonly poles: Poles; readonly modal: Modal; readonly orders: readonly StateLoad[] } | null {
   const { solver, system } = observed
   const poles = polesOf(system, {
     count: solver.freedoms,
@@ -51,6 +51,7 @@ export function firstOrder(
   if (poles === null) return null
   return {
     poles,
+    modal: { poles, omegaSquared: solver.omegaSquared, shapes: solver.shapes },
     orders: groupByOrder(loads).map(({ order, loads: own }) => stateLoad(observed, poles, order, own)),
   }
 }

@@ -58,6 +58,7 @@ export function runUpTrace(
           planPanels(course, Math.max(...form.orders.map(({ order }) => order))),
           form.poles,
           form.orders,
+          false,
         )
   if (form === null || march === null) {
     return {
@@ -74,7 +75,7 @@ export function runUpTrace(
       axis === 2 ? 1 : 0,
     ]),
   )
-  const watch = watchRows({ poles: form.poles, shapes: observed.solver.shapes }, rows)
+  const watch = watchRows(form.modal, rows)
   return {
     trace: { ...traceOf(march, watch, times), time: times, speed: speedsAt(course, times) },
     problems: [],

@@ -1,7 +1,6 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
 import type { Observed } from '../excitation/observed.ts'
 import type { SourceLoad } from '../excitation/order-loads.ts'
-import type { Poles } from '../network/poles.ts'
 import type { Project } from '../project/project.ts'
 import type { Problem, RunUpPass, RunUpPeak, RunUpPeaks, RunUpResult } from '../results.ts'
 import { envelopeOf } from './envelope.ts'
@@ -11,7 +10,7 @@ import { findPeaks, PEAK_TOLERANCE, type Peaks } from './peak-search.ts'
 import { firstOrder } from './prepared.ts'
 import { speedCourse, speedOf, type SpeedCourse } from './speed-course.ts'
 import { steadyPeaks } from './steady-peak.ts'
-import { travelRows, watchForce, watchRows, watchSum, type Watch } from './watch.ts'
+import { travelRows, watchForce, watchForces, watchRows, type Modal, type Watch } from './watch.ts'
 
 /** About how many samples the chart's curve has. */
 const ENVELOPE_SAMPLES = 1500
@@ -56,7 +55,7 @@ export function runUpOf(
     return { result: { up: null, down: null }, problems: [{ field: 'runUp', message, kind: 'invalid' }] }
   }
   const { poles, orders } = form
-  const watched = watchAll(project, observed, poles, scope)
+  const watched = watchAll(project, observed, form.modal, scope)
   const problems: Problem[] = []
   const pass = (direction: 'up' | 'down'): RunUpPass | null => {
     const { enabled, law, hold } = project.runUp[direction]
@@ -65,7 +64,12 @@ export function runUpOf(
     problems.push(...found.problems)
     if (found.course === null) return null
     const plan = planPanels(found.course, Math.max(...orders.map(({ order }) => order)))
-    const march = marchThrough(plan, poles, orders)
+    const march = marchThrough(
+      plan,
+      poles,
+      orders,
+      watched.watches.some(({ moves }) => moves),
+    )
     if (march === null) {
       problems.push({
         field: `runUp.${direction}.law`,
@@ -88,8 +92,7 @@ interface Watched {
   readonly absorbers: readonly { readonly id: string; readonly at: number }[]
 }
 
-function watchAll(project: Project, observed: Observed, poles: Poles, scope: RunUpScope): Watched {
-  const modal = { poles, shapes: observed.solver.shapes }
+function watchAll(project: Project, observed: Observed, modal: Modal, scope: RunUpScope): Watched {
   const watches: Watch[] = []
   const add = (watch: Watch) => watches.push(watch) - 1
   const points = project.machine.points.flatMap(({ id }, index) => {
@@ -97,13 +100,12 @@ function watchAll(project: Project, observed: Observed, poles: Poles, scope: Run
     return [{ id, at: add(watchRows(modal, observed.points[index]!)) }]
   })
   const none = watchRows(modal, [])
-  const forces = scope.force === false ? [] : observed.supports.map((element) => watchForce(modal, element))
-  const mounts = observed.supports.map((element, index) => ({
+  const mounts = observed.supports.map((element) => ({
     id: element.element.id,
-    force: add(forces[index] ?? none),
+    force: add(scope.force === false ? none : watchForce(modal, element)),
     travel: add(scope.travel === false ? none : watchRows(modal, travelRows(observed.system, element))),
   }))
-  const support = add(forces.length === 0 ? none : watchSum(forces))
+  const support = add(scope.force === false ? none : watchForces(modal, observed.supports))
   const absorbers = (scope.strokes === false ? [] : observed.absorbers).map(({ id, stroke }) => ({
     id,
     at: add(watchRows(modal, [stroke])),

@@ -1,8 +1,9 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
 import type { Poles } from '../network/poles.ts'
 import { steadyStates } from './march.ts'
-import type { StateLoad } from './panel.ts'
-import { addAmplitudes, objectivesOf, type Watch } from './watch.ts'
+import type { StateLoad } from './state-load.ts'
+import { amplitudesOfStates, amplitudeWork, objectivesOf } from './amplitude.ts'
+import type { Watch } from './watch.ts'
 
 /** Speeds looked at besides those about the resonances. */
 const EVEN = 48
@@ -36,7 +37,7 @@ export function steadyPeaks(
   })
   return watches.map((watch) => {
     const peaks = peaksOf(poles, loads, watch, speeds, re, im)
-    const sizes = [...watch.axes.map(({ size }) => size), watch.size]
+    const sizes = [...watch.axes.map(({ size }) => size.state), watch.all.state]
     return peaks.map((value, q) => (meetsUndamped(poles, loads, sizes[q]!, range) ? Infinity : value))
   })
 }
@@ -100,9 +101,10 @@ function peaksOf(
 ): Float64Array {
   const block = loads.length * poles.count
   const objectives = objectivesOf(watch)
+  const work = amplitudeWork()
   const values = new Float64Array(speeds.length * objectives)
   for (let s = 0; s < speeds.length; s++) {
-    addAmplitudes(watch, loads.length, poles.count, poles.count, re, im, s * block, values, s * objectives)
+    amplitudesOfStates(work, watch, loads.length, poles.count, re, im, s * block, values, s * objectives)
   }
   const oneRe = new Float64Array(block)
   const oneIm = new Float64Array(block)
@@ -111,7 +113,7 @@ function peaksOf(
     for (let o = 0; o < loads.length; o++) {
       steadyStates(poles, loads[o]!, speed, oneRe, oneIm, o * poles.count)
     }
-    addAmplitudes(watch, loads.length, poles.count, poles.count, oneRe, oneIm, 0, one, 0)
+    amplitudesOfStates(work, watch, loads.length, poles.count, oneRe, oneIm, 0, one, 0)
     return one[q]!
   }
   return Float64Array.from({ length: objectives }, (_, q) => {

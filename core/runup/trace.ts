@@ -1,6 +1,6 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
-import { refill, type March } from './march.ts'
-import { evaluateOrder, loadSignal, sample, signalWork } from './signal.ts'
+import type { March } from './march.ts'
+import { evaluateSignal, fillSignal, loadSignal, sample, signalWork } from './signal.ts'
 import type { Watch } from './watch.ts'
 
 /** A watched quantity against time: complex, orders together, the shaft at angle 0 at the start; the motion is the real part. */
@@ -14,8 +14,7 @@ export interface Trace {
 export function traceOf(march: March, watch: Watch, times: Float64Array): Trace {
   const { plan, loads } = march
   const signal = signalWork(march)
-  const scratch = sample()
-  const nothingLeftOut = new Float64Array(4)
+  const scratch = sample(loads.length)
   const re = watch.axes.map(() => new Float64Array(times.length))
   const im = watch.axes.map(() => new Float64Array(times.length))
   let panel = -1
@@ -25,19 +24,19 @@ export function traceOf(march: March, watch: Watch, times: Float64Array): Trace 
     while (next < plan.count - 1 && time > plan.time[next]! + plan.half[next]!) next++
     if (next !== panel) {
       panel = next
-      for (let o = 0; o < loads.length; o++) signal.keep(o, refill(march, o, panel).panel)
-      loadSignal(signal, watch, nothingLeftOut)
+      fillSignal(signal, panel, watch.moves)
+      loadSignal(signal, watch, 0)
     }
     const half = plan.half[panel]!
     const x = (time - plan.time[panel]!) / half
-    const straight = plan.angle[panel]! + half * march.work.speed[0]! * x
+    const straight = plan.angle[panel]! + half * signal.panels[0]!.speed[0]! * x
+    evaluateSignal(signal, x, scratch)
     for (let o = 0; o < loads.length; o++) {
-      evaluateOrder(signal, o, x, scratch)
       const cos = Math.cos(loads[o]!.order * straight)
       const sin = Math.sin(loads[o]!.order * straight)
       for (let d = 0; d < watch.axes.length; d++) {
-        re[d]![i]! += signal.nowRe[d]! * cos - signal.nowIm[d]! * sin
-        im[d]![i]! += signal.nowRe[d]! * sin + signal.nowIm[d]! * cos
+        re[d]![i]! += scratch.re[3 * o + d]! * cos - scratch.im[3 * o + d]! * sin
+        im[d]![i]! += scratch.re[3 * o + d]! * sin + scratch.im[3 * o + d]! * cos
       }
     }
   }
