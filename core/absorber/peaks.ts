@@ -62,7 +62,7 @@ export function localMaxima(shape: LogShape, alpha: number, b: number): Peak[] |
     let jet = logShapeJet(shape, delta, alpha, b)
     // One step of Newton's method on the factored form wins back digits that expanding it cost
     const step = -jet.d / jet.dd
-    if (Math.abs(step) < 1e-3 * Math.abs(delta)) {
+    if (Math.abs(step) < 1e-3 * Math.min(Math.abs(delta), 1 + delta)) {
       delta += step
       jet = logShapeJet(shape, delta, alpha, b)
     }
