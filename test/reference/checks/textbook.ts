@@ -38,22 +38,24 @@ export const textbookChecks: readonly Check[] = [
   ...casesOf<{ zeta: number }, Computed>(FILE, 'H-HALFPOWER').flatMap(quality),
 ]
 
-const of = ({ expected }: Case<unknown>, name: string): number => expected.computed[name] ?? missing()
+function of({ expected }: Case<unknown>, name: string): number {
+  return expected.computed[name] ?? missing()
+}
 
 function unbalancedMachine(given: Case<Unbalanced>): Check[] {
   const { mass_kg: mass, k_N_per_m: stiffness, force_N: force, rpm, zeta } = given.inputs
   const check = checkMaker(given)
-  const result = once(() =>
-    evaluate(
-      singleFreedomProject({
-        mass,
-        stiffness,
-        viscous: 2 * zeta * Math.sqrt(stiffness * mass),
-        source: { force },
-        speeds: [(rpm * 2 * Math.PI) / 60],
-      }),
-    ),
-  )
+  const result = once(() => {
+    const project = singleFreedomProject({
+      mass,
+      stiffness,
+      viscous: 2 * zeta * Math.sqrt(stiffness * mass),
+      source: { force },
+      speeds: [(rpm * 2 * Math.PI) / 60],
+    })
+    // the example reckons with 9.81 m/s²
+    return evaluate({ ...project, analysis: { ...project.analysis, gravity: 9.81 } })
+  })
   const running = () => result().response?.atSpeeds[0] ?? missing()
   const heave = () => result().modes?.find(({ name }) => name === 'heave') ?? missing()
   return [
