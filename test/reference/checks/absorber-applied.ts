@@ -1,4 +1,5 @@
 /** Group C, applied: fixed speed, stroke, complex response at given parameters. */
+import { coupledValue } from '../../../core/absorber/coupling.ts'
 import type { Shape } from '../../../core/absorber/kinds.ts'
 import { shapeValue, type HostAndAbsorber } from '../../../core/absorber/response.ts'
 import { evaluate } from '../../../core/evaluate.ts'
@@ -28,6 +29,7 @@ export const absorberAppliedChecks: readonly Check[] = [
   ...casesOf<StrokeInputs, { max_stroke: number; g_at_max_stroke: number }>(FILE, 'C2-STROKE').flatMap(
     strokeChecks,
   ),
+  ...casesOf<ReceptanceInputs, { H11_with: readonly Complex[] }>(FILE, 'C2-RECEPT').flatMap(receptanceChecks),
   ...casesOf<PointsInputs, Readonly<Record<string, readonly Complex[]>>>(FILE, 'C2-FRFPTS').flatMap(
     pointsChecks,
   ),
@@ -139,6 +141,52 @@ function strokeChecks(
     ['largest stroke', '', max_stroke, rel * max_stroke, () => result().maxStrokeRatio ?? missing()],
     ['its place', '', g_at_max_stroke, rel * g_at_max_stroke, () => result().maxStrokeAt ?? missing()],
   ])
+}
+
+interface ReceptanceInputs {
+  readonly freqs_Hz: readonly number[]
+  readonly receptance_H11_m_per_N: readonly Complex[]
+  readonly absorber: {
+    readonly mass_kg: number
+    readonly fn_Hz: number
+    readonly zeta_own: number
+    readonly eta: number
+  }
+}
+
+/** Magnitudes only: a band is judged by them. Cases with a loss factor wait for an elastomer absorber. */
+function receptanceChecks(given: ReferenceCase<ReceptanceInputs, { H11_with: readonly Complex[] }>): Check[] {
+  const { freqs_Hz, receptance_H11_m_per_N: receptance, absorber } = given.inputs
+  if (absorber.eta !== 0) return []
+  const own = 2 * Math.PI * absorber.fn_Hz
+  return finish(
+    given,
+    'formula',
+    given.expected.H11_with.map((value, k): Row => {
+      const frequency = freqs_Hz[k] ?? missing()
+      const { re, im } = receptance[k] ?? missing()
+      const square = re * re + im * im
+      const magnitude = Math.hypot(value.re, value.im)
+      return [
+        `receptance with the absorber at ${frequency} Hz`,
+        'm/N',
+        magnitude,
+        given.tolerance.rel * magnitude,
+        () => {
+          const omega = 2 * Math.PI * frequency
+          const level = coupledValue(
+            re / square,
+            -im / square,
+            omega,
+            absorber.mass_kg,
+            own * own,
+            2 * absorber.zeta_own * own,
+          )
+          return Math.exp(level / 2)
+        },
+      ]
+    }),
+  )
 }
 
 interface PointsInputs {
