@@ -10,7 +10,15 @@ export default defineConfig({
     ...(report ? { outputFile: { json: report } } : {}),
     projects: [
       { test: { name: 'core', include: ['test/core/**/*.test.ts'], testTimeout: 30_000 } },
-      { test: { name: 'shell', include: ['test/electron/**/*.test.ts'], testTimeout: 30_000, ...building } },
+      {
+        test: {
+          name: 'shell',
+          include: ['test/electron/**/*.test.ts'],
+          testTimeout: 60_000,
+          hookTimeout: 90_000,
+          ...building,
+        },
+      },
       {
         plugins: [svelte()],
         test: { name: 'pages', include: ['test/renderer/**/*.test.ts'], testTimeout: 30_000 },

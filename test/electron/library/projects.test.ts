@@ -1,3 +1,4 @@
+import Sqlite from 'better-sqlite3'
 import { describe, expect, it } from 'vitest'
 import { NotFoundError, StaleError } from '../../../electron/library/errors.ts'
 import { renamed, sampleProject } from '../projects.ts'
@@ -22,6 +23,18 @@ describe('saving', () => {
     projects.save(id, 1, renamed(sampleProject(), 'by the first'))
     expect(() => projects.save(id, 1, renamed(sampleProject(), 'by the second'))).toThrow(StaleError)
     expect(projects.open(id)).toMatchObject({ revision: 2, project: { job: { name: 'by the first' } } })
+  })
+
+  it('stores all of a save or, when it fails on the way, nothing', () => {
+    const { projects, file } = testLibrary()
+    const { id } = projects.create(sampleProject())
+    const other = new Sqlite(file)
+    other.exec('DROP TABLE project_text')
+    other.close()
+    expect(() => projects.save(id, 1, renamed(sampleProject(), 'half'))).toThrow(/project_text/)
+    expect(() => projects.create(renamed(sampleProject(), 'half'))).toThrow(/project_text/)
+    expect(projects.list({})).toHaveLength(1)
+    expect(projects.open(id)).toStrictEqual({ id, revision: 1, project: sampleProject() })
   })
 
   it('refuses an unknown project and one in the wastebasket', () => {
