@@ -7,26 +7,37 @@ import type { Vec3 } from '../project/fields.ts'
 import type { MassSummary } from '../results.ts'
 import type { StaticLoad } from '../network/statics.ts'
 import type { FittedMount } from './machine-network.ts'
-import { compressionOf, movedBy, sixOf } from './statics.ts'
+import { sixOf } from './statics.ts'
 import type { Vec6 } from '../results.ts'
 
-/** Laws of a mount along its three local axes, as force against travel along the axis. */
-export function restoringLaws(mount: FittedMount): readonly [Law, Law, Law] {
+type Law = RestoringSpring['law']
+/** How a mount resists along one of its local axes. */
+interface Resistance {
+  readonly axis: Readonly<Vec3>
+  readonly law: Law
+  readonly usual: number
+}
+
+/** A mount along its three local axes, as force against travel along each. */
+export function resistances(mount: FittedMount): readonly Resistance[] {
   const sideways =
     (stiffness: number): Law =>
     (travel) => ({ force: stiffness * travel, tangent: stiffness })
-  const [x, y] = mount.staticStiffness
+  const [x, y, z] = mount.staticStiffness
   return [
-    sideways(x),
-    sideways(y),
-    (travel) => {
-      // travel along the axis is upwards, compression downwards
-      const { force, tangent } = mount.law.at(-travel)
-      return { force: -force, tangent }
+    { axis: mount.axes[0], law: sideways(x), usual: x },
+    { axis: mount.axes[1], law: sideways(y), usual: y },
+    {
+      axis: mount.axes[2],
+      law: (travel) => {
+        // travel along the axis is upwards, compression downwards
+        const { force, tangent } = mount.law.at(-travel)
+        return { force: -force, tangent }
+      },
+      usual: z,
     },
   ]
 }
-type Law = RestoringSpring['law']
 
 /** The machine's mounts as springs on its six freedoms, their feet raised by packing. */
 export function mountSprings(
@@ -35,13 +46,11 @@ export function mountSprings(
   shims: readonly number[],
 ): RestoringSpring[] {
   return mounts.flatMap((mount, index) => {
-    const laws = restoringLaws(mount)
     const branches = system.elements[index]?.branches ?? []
-    return branches.map(({ row, branch }, direction) => ({
-      row,
-      offset: -(shims[index] ?? 0) * branch.axis[2],
-      law: laws[direction] ?? laws[0],
-    }))
+    return resistances(mount).flatMap(({ axis, law, usual }, direction) => {
+      const branch = branches[direction]
+      return branch ? [{ row: branch.row, offset: -(shims[index] ?? 0) * axis[2], law, usual }] : []
+    })
   })
 }
 
@@ -70,26 +79,18 @@ export function loadVector(system: System, loads: readonly StaticLoad[]): Float6
   return vector
 }
 
-/** Force of each mount on the machine when it stands displaced [N]. */
-export function mountForces(
-  mounts: readonly FittedMount[],
-  displacement: Vec6,
-  shims: readonly number[],
-  summary: MassSummary,
-): Vec3[] {
-  return mounts.map((mount, index) => {
-    const shim = shims[index] ?? 0
-    const moved = movedBy(displacement, mount.placed.position, summary.centreOfGravity)
-    const relative: Vec3 = [moved[0], moved[1], moved[2] - shim]
-    const [x, y] = mount.staticStiffness
-    const along = (axis: Readonly<Vec3>) =>
-      axis[0] * relative[0] + axis[1] * relative[1] + axis[2] * relative[2]
-    const pressed = mount.law.at(compressionOf(mount, moved, shim)).force
-    return add(
-      add(scale(mount.axes[0], -x * along(mount.axes[0])), scale(mount.axes[1], -y * along(mount.axes[1]))),
-      scale(mount.axes[2], pressed),
-    )
-  })
+/**
+ * Force of each mount on the machine [N], from what its springs bear: the very forces that were brought
+ * to balance.
+ * @param borne by each spring, three to a mount, in the order of the mounts
+ */
+export function mountForces(mounts: readonly FittedMount[], borne: readonly number[]): Vec3[] {
+  return mounts.map(({ axes }, index) =>
+    axes.reduce<Vec3>(
+      (sum, axis, direction) => add(sum, scale(axis, -(borne[3 * index + direction] ?? 0))),
+      [0, 0, 0],
+    ),
+  )
 }
 
 export interface CurvedRest {

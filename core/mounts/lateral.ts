@@ -78,7 +78,7 @@ function lateralCase(
   })
   if (!settled.converged) return null
   const displacement = sixOf(settled.displacement)
-  const forces = mountForces(mounts, displacement, shims, summary)
+  const forces = mountForces(mounts, settled.forces)
   const results = mounts.map((mount, index) => {
     const force = forces[index] ?? [0, 0, 0]
     const now = movedBy(displacement, mount.placed.position, summary.centreOfGravity)

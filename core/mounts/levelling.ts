@@ -5,7 +5,7 @@ import { dot, norm, subtract } from '../numerics/vector3.ts'
 import type { Vec3 } from '../project/fields.ts'
 import type { Mounting } from '../project/mounts.ts'
 import type { MassSummary, Problem, Vec6 } from '../results.ts'
-import { mountForces, restoringLaws } from './curved-statics.ts'
+import { mountForces, resistances } from './curved-statics.ts'
 import type { FittedMount } from './machine-network.ts'
 import type { Weights } from './statics.ts'
 
@@ -22,10 +22,15 @@ export interface Levelled {
   readonly settled: Settled
 }
 
-/** Sideways forces of inclined mounts at unlike heights shift the balance: repeated until it stays. */
-const MOST_ROUNDS = 60
+/** Sideways forces of inclined mounts at unlike heights shift the balance: Newton's steps towards it. */
+const MOST_ROUNDS = 30
 const SAME = 1e-12
 const DEEPEST = 10
+/** Step of the moment for its effect on itself, over the weight at the mounts' reach. */
+const TRIAL = 1e-4
+
+/** Moment about x and y through the centre of weight [N m]. */
+type Moment = readonly [aboutX: number, aboutY: number]
 
 /**
  * Packing on which the machine stands level and every mount carries the wished load, or the loads
@@ -40,18 +45,33 @@ export function levelled(
   const wished = wishedLoads(mounts, by, weights.total)
   if ('kind' in wished) return wished
   const centre = weightCentre(weights)
-  let moment: readonly [number, number] = [0, 0]
-  for (let round = 0; round < MOST_ROUNDS; round++) {
+  const size = weights.total * spread(mounts, centre)
+  const under = (moment: Moment) => {
     const loads = balanced(mounts, wished, weights.total, centre, moment)
-    if (loads === null) return IN_ONE_LINE
-    const { settled, displacement, shims } = settleLevel(mounts, loads, weights.total, summary)
-    if (!settled.converged) return { displacement, shims, wished, settled }
-    const forces = mountForces(mounts, displacement, shims, summary)
-    const next = sidewaysMoment(mounts, forces, centre)
-    const size = weights.total * spread(mounts, centre)
-    const change = Math.max(Math.abs(next[0] - moment[0]), Math.abs(next[1] - moment[1]))
-    if (change <= SAME * size) return { displacement, shims, wished, settled }
-    moment = next
+    if (loads === null) return null
+    const level = settleLevel(mounts, loads, weights.total, summary)
+    const sideways = sidewaysMoment(mounts, mountForces(mounts, level.settled.forces), centre)
+    return { level, rest: [sideways[0] - moment[0], sideways[1] - moment[1]] as Moment }
+  }
+  let moment: Moment = [0, 0]
+  for (let round = 0; round < MOST_ROUNDS; round++) {
+    const here = under(moment)
+    if (here === null) return IN_ONE_LINE
+    const { level, rest } = here
+    if (!level.settled.converged || Math.hypot(...rest) <= SAME * size) return { ...level, wished }
+    const step = TRIAL * size
+    const aboutX = under([moment[0] + step, moment[1]])?.rest ?? rest
+    const aboutY = under([moment[0], moment[1] + step])?.rest ?? rest
+    const a = (aboutX[0] - rest[0]) / step
+    const b = (aboutY[0] - rest[0]) / step
+    const c = (aboutX[1] - rest[1]) / step
+    const d = (aboutY[1] - rest[1]) / step
+    const determinant = a * d - b * c
+    if (Math.abs(determinant) < 1e-9) return NO_BALANCE
+    moment = [
+      moment[0] - (d * rest[0] - b * rest[1]) / determinant,
+      moment[1] - (a * rest[1] - c * rest[0]) / determinant,
+    ]
   }
   return NO_BALANCE
 }
@@ -111,10 +131,7 @@ function wishedLoads(mounts: readonly FittedMount[], by: Aim, weight: number): r
 
 /** Upward force of a mount whose top goes straight down by `depth` [N]. */
 function verticalForce(mount: FittedMount, depth: number): number {
-  return restoringLaws(mount).reduce((sum, law, direction) => {
-    const axis = mount.axes[direction] ?? [0, 0, 0]
-    return sum - axis[2] * law(-axis[2] * depth).force
-  }, 0)
+  return resistances(mount).reduce((sum, { axis, law }) => sum - axis[2] * law(-axis[2] * depth).force, 0)
 }
 
 function weightCentre({ own, hung, total }: Weights): Vec3 {
@@ -135,7 +152,7 @@ function balanced(
   wished: readonly number[],
   weight: number,
   centre: Vec3,
-  moment: readonly [number, number],
+  moment: Moment,
 ): readonly number[] | null {
   const size = spread(mounts, centre)
   const places = mounts.map(({ placed }) => {
@@ -169,12 +186,8 @@ function spread(mounts: readonly FittedMount[], centre: Vec3): number {
 }
 
 /** Moment of the mounts' horizontal forces about x and y through the centre of weight [N m]. */
-function sidewaysMoment(
-  mounts: readonly FittedMount[],
-  forces: readonly Vec3[],
-  centre: Vec3,
-): readonly [number, number] {
-  return mounts.reduce<readonly [number, number]>(
+function sidewaysMoment(mounts: readonly FittedMount[], forces: readonly Vec3[], centre: Vec3): Moment {
+  return mounts.reduce<Moment>(
     ([aboutX, aboutY], { placed }, index) => {
       const height = placed.position[2] - centre[2]
       const force = forces[index] ?? [0, 0, 0]
@@ -198,13 +211,13 @@ function settleLevel(
   const size = spread(mounts, [...summary.centreOfGravity])
   const springs = mounts.flatMap((mount, index): RestoringSpring[] => {
     const [x, y] = subtract(mount.placed.position, summary.centreOfGravity)
-    return restoringLaws(mount).map((law, direction) => {
-      const axis = mount.axes[direction] ?? [0, 0, 0]
+    return resistances(mount).map(({ axis, law, usual }) => {
       const values = [axis[0], axis[1], dot(axis, [-y, x, 0]), axis[2]]
       return {
         row: { indices: Int32Array.of(0, 1, 2, 3 + index), values: Float64Array.from(values) },
         offset: 0,
         law,
+        usual,
       }
     })
   })

@@ -67,7 +67,7 @@ export function restOf(
   const system = assemble(machineNetwork(working, summary, 'static'))
   const rest: RestPosition = {
     displacement,
-    forces: mountForces(mounts, displacement, shims, summary),
+    forces: mountForces(mounts, settled.forces),
     shims,
     wished: found.wished,
     setting: setting.kind,

@@ -9,6 +9,8 @@ export interface RestoringSpring {
   /** travel where q is zero, from packing [m] */
   readonly offset: number
   readonly law: (travel: number) => { readonly force: number; readonly tangent: number }
+  /** stiffness that stands for the law where its tangent is no guide, above zero unless it is slack throughout */
+  readonly usual: number
 }
 
 export interface SettleProblem {
@@ -26,6 +28,8 @@ export interface SettleProblem {
 export interface Settled {
   readonly converged: boolean
   readonly displacement: Float64Array
+  /** what each spring bears there, in the order of the springs */
+  readonly forces: readonly number[]
   readonly iterations: number
   /** largest unbalanced force over its scale */
   readonly residual: number
@@ -34,48 +38,76 @@ export interface Settled {
 }
 
 const MOST_ITERATIONS = 80
-/** Balance to this share of the scale is wanted; to the second it is accepted when rounding ends the way. */
+/** Balance to this share of the scale is wanted. */
 const WANTED = 1e-13
-const ACCEPTED = 1e-9
-/** A step is shortened while the force along it still turns round by more than this share. */
-const TURNED = 0.9
+/**
+ * Where springs differ by many decades, rounding leaves more than that: a balance this good is accepted
+ * once steps no longer halve what is left.
+ */
+const ACCEPTED = 1e-6
+/** What may be left of the force along a step, as a share. */
+const LOST = 0.5
+const MOST_TRIALS = 60
 
 /**
  * Rest position of a network with curved springs, by Newton's method with a line search. Springs
  * that stiffen or soften but never fall have one rest position only, and the search goes to it.
  */
 export function settle(problem: SettleProblem): Settled {
-  const n = problem.load.length
-  let displacement = Float64Array.from(problem.start ?? new Float64Array(n))
+  const { springs, scale, load } = problem
+  let displacement: Float64Array = Float64Array.from(problem.start ?? new Float64Array(load.length))
   let state = unbalanced(problem, displacement)
-  let residual = sizeOf(state, problem.scale)
+  let residual = sizeOf(state, scale)
+  const outcome = (iterations: number, reason: Settled['reason']): Settled => ({
+    converged: reason === '',
+    displacement,
+    forces: springs.map(({ row, offset, law }) => law(rowTimes(row, displacement) + offset).force),
+    iterations,
+    residual,
+    reason,
+  })
+  let flat = false
   for (let iterations = 0; iterations < MOST_ITERATIONS; iterations++) {
-    const done = (reason: Settled['reason']): Settled => ({
-      converged: reason === '',
-      displacement,
-      iterations,
-      residual,
-      reason,
-    })
-    if (residual <= WANTED) return done('')
-    const step = solvePositiveDefinite(tangentMatrix(problem, displacement), state)
-    if (step === null) return done(residual <= ACCEPTED ? '' : 'slack')
-    const along = dot(state, step)
-    let size = 1
-    let next = stepped(displacement, step, size)
-    let after = unbalanced(problem, next)
-    while (dot(after, step) < -TURNED * along && size > 1e-9) {
-      size /= 2
-      next = stepped(displacement, step, size)
-      after = unbalanced(problem, next)
-    }
-    const left = sizeOf(after, problem.scale)
-    if (residual <= ACCEPTED && left >= residual) return done('')
-    displacement = next
-    state = after
+    if (residual <= WANTED) return outcome(iterations, '')
+    // a curve may begin flat: there the usual stiffness leads on
+    const newton = solvePositiveDefinite(tangentMatrix(problem, displacement), state)
+    const step = newton ?? solvePositiveDefinite(usualMatrix(problem), state)
+    flat = newton === null
+    if (step === null) return outcome(iterations, residual <= ACCEPTED ? '' : 'slack')
+    const next = along(problem, displacement, state, step)
+    const left = sizeOf(next.state, scale)
+    if (residual <= ACCEPTED && left > residual / 2) return outcome(iterations, '')
+    displacement = next.displacement
+    state = next.state
     residual = left
   }
-  return { converged: false, displacement, iterations: MOST_ITERATIONS, residual, reason: 'slow' }
+  return outcome(MOST_ITERATIONS, flat ? 'slack' : 'slow')
+}
+
+/**
+ * The step, or the part of it at which the force along it has lost at least half of its size without
+ * turning round by more: what a spring that never falls always allows.
+ */
+function along(
+  problem: SettleProblem,
+  from: Float64Array,
+  state: Float64Array,
+  step: Float64Array,
+): { readonly displacement: Float64Array; readonly state: Float64Array } {
+  const force = dot(state, step)
+  let [low, high] = [0, Infinity]
+  let size = 1
+  for (let trial = 0; ; trial++) {
+    const displacement = from.map((value, index) => value + size * (step[index] ?? 0))
+    const after = unbalanced(problem, displacement)
+    const left = dot(after, step)
+    // a whole step that falls short is for the next iteration to lengthen
+    const fits = left >= -LOST * force && (left <= LOST * force || high === Infinity)
+    if (fits || trial === MOST_TRIALS) return { displacement, state: after }
+    if (left < 0) high = size
+    else low = size
+    size = (low + high) / 2
+  }
 }
 
 /** Load less what the springs bear at a displacement. */
@@ -96,17 +128,22 @@ function unbalanced({ springs, load, further }: SettleProblem, displacement: Flo
   return left
 }
 
-function tangentMatrix({ springs, load, further }: SettleProblem, displacement: Float64Array): Float64Array {
-  const n = load.length
-  const matrix = further ? Float64Array.from(further.matrix) : new Float64Array(n * n)
-  for (const { row, offset, law } of springs) {
-    addProduct(matrix, n, row, law(rowTimes(row, displacement) + offset).tangent)
-  }
-  return matrix
+function tangentMatrix(problem: SettleProblem, displacement: Float64Array): Float64Array {
+  return stiffnessMatrix(problem, ({ row, offset, law }) => law(rowTimes(row, displacement) + offset).tangent)
 }
 
-function stepped(from: Float64Array, step: Float64Array, size: number): Float64Array<ArrayBuffer> {
-  return Float64Array.from(from, (value, index) => value + size * (step[index] ?? 0))
+function usualMatrix(problem: SettleProblem): Float64Array {
+  return stiffnessMatrix(problem, ({ usual }) => usual)
+}
+
+function stiffnessMatrix(
+  { springs, load, further }: SettleProblem,
+  stiffness: (spring: RestoringSpring) => number,
+): Float64Array {
+  const n = load.length
+  const matrix = further ? Float64Array.from(further.matrix) : new Float64Array(n * n)
+  for (const spring of springs) addProduct(matrix, n, spring.row, stiffness(spring))
+  return matrix
 }
 
 function sizeOf(forces: Float64Array, scale: Float64Array): number {
