@@ -2,7 +2,9 @@
 import { expect } from 'vitest'
 import type { Browser, Locator, Page } from 'playwright-core'
 
-const PATIENCE = 15_000
+const PATIENCE = 30_000
+/** Longer than the interface takes from a change to its new verdicts on a busy machine [ms]. */
+const STANDSTILL = 400
 
 export interface Visit {
   readonly page: Page
@@ -75,9 +77,20 @@ export function verdict(page: Page, title: RegExp): Locator {
   return page.getByRole('complementary', { name: 'Verdicts' }).getByRole('article', { name: title })
 }
 
-/** All verdicts as they are read: "title: status" with the figures under it. */
+/**
+ * All verdicts as they are read: "title: status" with the figures under it. Waits until there are
+ * some and they stand still, since a project that has just been opened is still being computed.
+ */
 export async function verdictTexts(page: Page): Promise<string[]> {
-  return page.getByRole('complementary', { name: 'Verdicts' }).getByRole('article').allInnerTexts()
+  const cards = page.getByRole('complementary', { name: 'Verdicts' }).getByRole('article')
+  await cards.first().waitFor()
+  let texts = await cards.allInnerTexts()
+  for (;;) {
+    await page.waitForTimeout(STANDSTILL)
+    const later = await cards.allInnerTexts()
+    if (later.join() === texts.join()) return texts
+    texts = later
+  }
 }
 
 export async function saved(page: Page): Promise<void> {
