@@ -25,7 +25,8 @@ import type {
   RunUpResult,
   SpeedResponse,
 } from './results.ts'
-import { judge, type Computed } from './verdict/judge.ts'
+import { judge } from './verdict/judge.ts'
+import type { Computed } from './verdict/verdict.ts'
 import { adviseLevers } from './verdict/levers.ts'
 import { speedsWithin, troubledSpan } from './verdict/trial-span.ts'
 

@@ -1,7 +1,7 @@
 import { assertNever } from '../errors.ts'
 import type { Project } from '../project/project.ts'
 import type { Requirement } from '../project/requirements.ts'
-import type { Evaluation, Verdict } from '../results.ts'
+import type { Verdict } from '../results.ts'
 import {
   judgeAbsorberStroke,
   judgeIsolation,
@@ -11,8 +11,7 @@ import {
 import { judgeRunUpForce, judgeRunUpMotion } from './run-up-verdicts.ts'
 import { judgeModeSeparation } from './separation-verdict.ts'
 import { judgeMountDeflection, judgeMountLoad } from './static-verdicts.ts'
-
-export type Computed = Omit<Evaluation, 'verdicts'>
+import type { Computed } from './verdict.ts'
 
 /**
  * Judges every enabled requirement against what was computed. What could not be computed is

@@ -1,13 +1,11 @@
 import { severityLimit, severityScales } from '../criteria/severity.ts'
 import type { Project } from '../project/project.ts'
-import type { Requirement, SpeedSpan } from '../project/requirements.ts'
+import type { SpeedSpan } from '../project/requirements.ts'
 import type { Verdict } from '../results.ts'
-import type { Computed } from './judge.ts'
+import { mountName, type Of } from './names.ts'
 import { highestWithin, spanSpeeds, SPAN_WORDS, type Extreme } from './span.ts'
-import { mountName } from './static-verdicts.ts'
-import { reasonFor, unknownVerdict, verdictOf } from './verdict.ts'
+import { reasonFor, unknownVerdict, verdictOf, type Computed } from './verdict.ts'
 
-type Of<K extends Requirement['kind']> = Extract<Requirement, { kind: K }>
 interface Placed extends Extreme {
   readonly place: string
 }

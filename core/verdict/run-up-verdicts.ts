@@ -1,11 +1,8 @@
 import type { Project } from '../project/project.ts'
-import type { Requirement } from '../project/requirements.ts'
 import type { RunUpPass, RunUpPeak, Verdict } from '../results.ts'
-import type { Computed } from './judge.ts'
-import { mountName } from './static-verdicts.ts'
-import { reasonFor, unknownVerdict, verdictOf } from './verdict.ts'
+import { mountName, type Of } from './names.ts'
+import { reasonFor, unknownVerdict, verdictOf, type Computed } from './verdict.ts'
 
-type Of<K extends Requirement['kind']> = Extract<Requirement, { kind: K }>
 type During = Of<'runUpForce'>['during']
 
 const DURING: Readonly<Record<During, string>> = {

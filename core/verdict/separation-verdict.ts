@@ -1,10 +1,9 @@
 import type { Project } from '../project/project.ts'
-import type { Requirement } from '../project/requirements.ts'
 import type { Mode, Verdict } from '../results.ts'
 import { formatPlain } from '../units/format.ts'
-import type { Computed } from './judge.ts'
+import type { Of } from './names.ts'
 import { spanSpeeds, SPAN_WORDS } from './span.ts'
-import { reasonFor, unknownVerdict, verdictOf } from './verdict.ts'
+import { reasonFor, unknownVerdict, verdictOf, type Computed } from './verdict.ts'
 
 interface Closest {
   readonly mode: Mode
@@ -20,7 +19,7 @@ interface Closest {
  * share of the exciting frequency: |f_n - f| / f.
  */
 export function judgeModeSeparation(
-  requirement: Extract<Requirement, { kind: 'modeSeparation' }>,
+  requirement: Of<'modeSeparation'>,
   project: Project,
   computed: Computed,
 ): Verdict {

@@ -1,15 +1,7 @@
 import type { Project } from '../project/project.ts'
-import type { Requirement } from '../project/requirements.ts'
 import type { MountStatics, Verdict } from '../results.ts'
-import type { Computed } from './judge.ts'
-import { reasonFor, unknownVerdict, verdictOf } from './verdict.ts'
-
-type Of<K extends Requirement['kind']> = Extract<Requirement, { kind: K }>
-
-/** Name of a mount as marked on the plan. */
-export function mountName(project: Project, id: string): string {
-  return project.mounting.placed.find((mount) => mount.id === id)?.name || id
-}
+import { mountName, type Of } from './names.ts'
+import { reasonFor, unknownVerdict, verdictOf, type Computed } from './verdict.ts'
 
 /** Static load of the hardest loaded mount as a share of its rating. */
 export function judgeMountLoad(requirement: Of<'mountLoad'>, project: Project, computed: Computed): Verdict {

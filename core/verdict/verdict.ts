@@ -5,6 +5,9 @@ import type { Dimension } from '../units/dimensions.ts'
 /** Closer to the limit than this share of it, a pass is called near: common practice, no source. */
 export const NEAR_MARGIN = 0.1
 
+/** All that has been computed about a project, ready to be judged. */
+export type Computed = Omit<Evaluation, 'verdicts'>
+
 interface Subject {
   readonly title: string
   readonly dimension: Dimension

@@ -2,7 +2,7 @@ import type { Vec3 } from '../../../core/project/fields.ts'
 import type { MachinePart } from '../../../core/project/machine.ts'
 import type { Project } from '../../../core/project/project.ts'
 import type { Evaluation } from '../../../core/results.ts'
-import { mountName } from '../../../core/verdict/static-verdicts.ts'
+import { mountName } from '../../../core/verdict/names.ts'
 
 export interface Attachment {
   readonly id: string

@@ -1,7 +1,7 @@
 import type { Project } from '../../../core/project/project.ts'
 import type { Evaluation, Mode, Sweep } from '../../../core/results.ts'
 import { formatPlain } from '../../../core/units/format.ts'
-import { mountName } from '../../../core/verdict/static-verdicts.ts'
+import { mountName } from '../../../core/verdict/names.ts'
 import type { ChartSeries } from '../../charts/chart-types.ts'
 import { crossingsUpTo } from '../../charts/speed-marks.ts'
 

@@ -1,7 +1,7 @@
 import type { Project } from '../../../core/project/project.ts'
 import type { Evaluation, Sweep } from '../../../core/results.ts'
 import type { Dimension } from '../../../core/units/dimensions.ts'
-import { mountName } from '../../../core/verdict/static-verdicts.ts'
+import { mountName } from '../../../core/verdict/names.ts'
 import { valueAt } from '../../charts/sample.ts'
 
 export interface Reading {
