@@ -3,6 +3,7 @@ import { describe, expect, it } from 'vitest'
 import { transverseStiffness } from '../../../core/components/haringx-column.ts'
 import {
   bucklingDeflection,
+  leastClearance,
   solidLength,
   springLateralRate,
   springRate,
@@ -83,11 +84,13 @@ describe('a helical spring', () => {
   })
 
   it('agrees across the switch between series and closed form in the column', () => {
-    const column = { length: 0.2, bendingRigidity: 3, shearRigidity: 900 }
-    // z = 0.02 at P = 0.1197: a jump there would show against the smooth change around it
-    const at = (force: number) => transverseStiffness(column, force) ?? 0
-    const step = at(0.1201) - at(0.1193)
-    expect(Math.abs(at(0.1197001) - at(0.1196999)) / Math.abs(step)).toBeLessThan(1e-3)
+    const [length, bendingRigidity, shearRigidity] = [0.2, 3, 900]
+    const at = (force: number) => transverseStiffness({ length, bendingRigidity, shearRigidity }, force) ?? 0
+    // the switch stands at z = 0.02, P (1 + P/S) = 4 B z² / L²
+    const right = (4 * bendingRigidity * 0.02 ** 2) / length ** 2
+    const force = (shearRigidity * (Math.sqrt(1 + (4 * right) / shearRigidity) - 1)) / 2
+    // both forms are good to about 1e-12 there
+    expect(at(force * (1 - 1e-12)) / at(force * (1 + 1e-12)) - 1).toBeCloseTo(0, 10)
   })
 
   it('is as stiff along and across, in proportion, in every size', () => {
@@ -114,6 +117,14 @@ describe('a helical spring', () => {
   it('lies solid as long as its coils are thick', () => {
     expect(solidLength(0.01, 8, 'closedGround')).toBeCloseTo(0.08, 12)
     expect(solidLength(0.01, 8, 'closed')).toBeCloseTo(0.095, 12)
+  })
+
+  it('keeps the clearance between its coils that its forming asks for', () => {
+    // SOURCE EN 13906-1 (from memory), by hand: 6.5 (0.0015 · 60² / 8 + 0.8) mm and 0.02 · 6.5 (60 + 8) mm
+    expect(leastClearance(GEOMETRY, 'cold')).toBeCloseTo(9.5875e-3, 12)
+    expect(leastClearance(GEOMETRY, 'hot')).toBeCloseTo(8.84e-3, 12)
+    const { figures } = analyseSpring(spring())
+    expect((figures?.solidTravel ?? 0) - (figures?.workingTravel ?? 0)).toBeCloseTo(9.5875e-3, 12)
   })
 })
 
@@ -144,6 +155,8 @@ describe('the analysis of a spring', () => {
     const { figures } = analyseSpring(spring({ freeLength: 0.6, load: 7000 }))
     expect(figures?.lateralRate).toBeNull()
     expect(figures?.ratedBy).toBe('stability')
+    // a fifth is kept from buckling
+    expect(figures?.ratedLoad).toBeCloseTo(0.8 * (figures?.rate ?? 0) * (figures?.bucklingDeflection ?? 0), 8)
   })
 
   it('takes a measured rate as it is', () => {

@@ -109,6 +109,14 @@ describe('a rubber pad', () => {
     )
   })
 
+  it('is rated by compression where it is flat and by stability where it is tall', () => {
+    const [flat, tall] = [figures(pad()), figures(pad({ layers: 8, load: 100 }))]
+    expect(flat.ratedBy).toBe('compression')
+    expect(flat.ratedLoad).toBeCloseTo(flat.rate * 0.15 * 0.025, 8)
+    expect(tall.ratedBy).toBe('stability')
+    expect(tall.ratedLoad).toBeCloseTo(0.8 * tall.bucklingLoad, 8)
+  })
+
   it('is at most as stiff as incompressible rubber would be, and nearly that where layers are thick', () => {
     const without = (design: PadDesign) => figures({ ...design, volumeCompressibility: false }).rate
     fc.assert(
@@ -125,6 +133,8 @@ describe('a rubber pad', () => {
     // area pi/4 (D² - d²) and edge pi (D + d) by hand: 8 pi/4 · 4e-4, 0.08 pi
     expect(section?.area).toBeCloseTo(8 * Math.PI * 1e-4, 12)
     expect(section?.edge).toBeCloseTo(0.08 * Math.PI, 12)
+    // second moment pi/64 (D⁴ - d⁴), in mm⁴: pi/64 (12.96e6 - 0.16e6) = pi 2e5
+    expect((section?.secondMoment[0] ?? 0) * 1e12).toBeCloseTo(2e5 * Math.PI, 3)
     expect(padSection({ kind: 'disc', diameter: 0.02, bore: 0.02 })).toBeNull()
   })
 
