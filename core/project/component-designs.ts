@@ -83,7 +83,7 @@ const rubber = z.discriminatedUnion('from', [
 
 export const padDesignSchema = z.strictObject({
   component: z.literal('rubberPad'),
-  shape: padShape.prefault({ kind: 'disc' }),
+  shape: padShape.prefault({ kind: 'disc' }).meta({ description: 'plan of the pad' }),
   thickness: size('thickness of the rubber in one layer'),
   layers: z
     .number()
@@ -92,7 +92,9 @@ export const padDesignSchema = z.strictObject({
     .max(50)
     .default(1)
     .meta({ description: 'layers of rubber on top of each other, parted by bonded plates' }),
-  rubber: rubber.prefault({ from: 'hardness' }),
+  rubber: rubber
+    .prefault({ from: 'hardness' })
+    .meta({ description: 'the rubber, by its hardness or its shear modulus' }),
   volumeCompressibility: z
     .boolean()
     .default(true)
