@@ -94,7 +94,7 @@ export const padDesignSchema = z.strictObject({
     .meta({ description: 'layers of rubber on top of each other, parted by bonded plates' }),
   rubber: rubber
     .prefault({ from: 'hardness' })
-    .meta({ description: 'the rubber, by its hardness or its shear modulus' }),
+    .meta({ description: 'the rubber, by its hardness or its typed moduli' }),
   volumeCompressibility: z
     .boolean()
     .default(true)
