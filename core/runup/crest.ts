@@ -1,9 +1,9 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
-import type { Sample, SignalWork } from './signal.ts'
+import type { Signal } from './signal.ts'
 
 /**
- * Upper bound of a watched quantity between two samples. Each direction's motion is the cubic through
- * both values and derivatives but for length⁴ / 384 of its fourth derivative; the square of a cubic's
+ * How high a quantity rises between two samples. Each direction's motion is the cubic through both
+ * values and derivatives but for length⁴ / 384 of its fourth derivative; the square of a cubic's
  * amplitude is a polynomial of degree six, nowhere above the largest of its Bernstein coefficients.
  * G. Farin, Curves and Surfaces for CAGD, 5th ed., Morgan Kaufmann, 2002 (convex hull property).
  */
@@ -12,12 +12,9 @@ export interface CrestWork {
   readonly square: Float64Array
   readonly plainRe: Float64Array
   readonly plainIm: Float64Array
-  /** coefficients of one objective and order */
-  readonly one: Float64Array
-  readonly sum: Float64Array
-  /** bound by objective, and where in the interval (0 to 1) the crest seems to stand */
-  readonly bound: Float64Array
-  readonly at: Float64Array
+  /** coefficients of one objective, order o from o 7 on, and all together */
+  readonly byOrder: Float64Array
+  readonly together: Float64Array
 }
 
 export function crestWork(orders: number): CrestWork {
@@ -26,34 +23,94 @@ export function crestWork(orders: number): CrestWork {
     square: make(orders * 21),
     plainRe: make(orders * 21),
     plainIm: make(orders * 21),
-    one: make(7),
-    sum: make(7),
-    bound: make(4),
-    at: make(4),
+    byOrder: make(orders * 7),
+    together: make(7),
   }
 }
 
-/** Bounds without what the cubics leave out, written to `work.bound`, and guesses of the crests to `work.at`. */
-export function crests(work: CrestWork, signal: SignalWork, a: Sample, b: Sample, length: number): void {
-  const { axes, orders } = signal
+/** Prepares the cubics between two samples. @param length of the interval in x */
+export function loadCubics(
+  work: CrestWork,
+  axes: number,
+  orders: number,
+  a: Signal,
+  b: Signal,
+  length: number,
+): void {
   for (let o = 0; o < orders; o++) {
-    for (let d = 0; d < axes; d++) squares(work, a, b, 3 * o + d, length / 3)
+    for (let d = 0; d < axes; d++) squares(work, a, b, 3 * o + d, length / 3, axes > 1)
   }
-  const objectives = axes === 1 ? 1 : axes + 1
-  for (let q = 0; q < objectives; q++) {
-    combineOrders(work, axes, orders, q)
-    const { sum } = work
+}
+
+/**
+ * Whether an objective (a direction, or the resultant after them) of the loaded cubics may exceed a
+ * height; cheap bounds first.
+ */
+export function mayExceed(
+  work: CrestWork,
+  axes: number,
+  orders: number,
+  objective: number,
+  height: number,
+): boolean {
+  if (!(height > 0)) return true
+  let sum = 0
+  for (let o = 0; o < orders; o++) {
     let top = 0
-    for (let k = 0; k < 7; k++) if (sum[k]! > top) top = sum[k]!
-    work.bound[q] = Math.sqrt(top)
-    const rise = sum[1]! - sum[0]!
-    const fall = sum[5]! - sum[6]!
-    work.at[q] = rise > 0 && fall > 0 ? rise / (rise + fall) : 0.5
+    for (let k = o * 21; k < o * 21 + 7; k++) {
+      // the resultant is no longer than the length of the complex vector
+      let square = 0
+      if (objective < axes) square = work.square[k + 7 * objective]!
+      else for (let d = 0; d < axes; d++) square += work.square[k + 7 * d]!
+      if (square > top) top = square
+    }
+    sum += Math.sqrt(top)
   }
+  if (sum <= height) return false
+  for (let o = 0; o < orders; o++) ofOrder(work, axes, o, objective)
+  combineOrders(work, orders)
+  let top = 0
+  for (let k = 0; k < 7; k++) if (work.together[k]! > top) top = work.together[k]!
+  return top > height * height
+}
+
+/** Where in the interval (0 to 1) the objective that was asked for last has its crest. */
+export function crestPlace({ together }: CrestWork): number {
+  let best = 0
+  let value = -Infinity
+  for (let i = 0; i <= STEPS; i++) {
+    const now = bernstein(together, i / STEPS)
+    if (now <= value) continue
+    value = now
+    best = i
+  }
+  if (best === 0 || best === STEPS) return best / STEPS
+  const before = bernstein(together, (best - 1) / STEPS)
+  const after = bernstein(together, (best + 1) / STEPS)
+  const bend = before - 2 * value + after
+  return (best + (bend < 0 ? (before - after) / (2 * bend) : 0)) / STEPS
+}
+
+/** Height of the cubics' amplitude there. */
+export function crestHeight({ together }: CrestWork, place: number): number {
+  return Math.sqrt(Math.max(0, bernstein(together, place)))
+}
+
+const STEPS = 8
+
+function bernstein(c: Float64Array, t: number): number {
+  const s = 1 - t
+  const s2 = s * s
+  const t2 = t * t
+  return (
+    s2 * s2 * (s2 * c[0]! + 6 * s * t * c[1]! + 15 * t2 * c[2]!) +
+    20 * s2 * s * t2 * t * c[3]! +
+    t2 * t2 * (15 * s2 * c[4]! + 6 * s * t * c[5]! + t2 * c[6]!)
+  )
 }
 
 /** Products of the control points i and j fall on coefficient i + j, with C(3,i) C(3,j) / C(6,i+j). */
-function squares(work: CrestWork, a: Sample, b: Sample, at: number, third: number): void {
+function squares(work: CrestWork, a: Signal, b: Signal, at: number, third: number, plain: boolean): void {
   const { square, plainRe, plainIm } = work
   const r0 = a.re[at]!
   const i0 = a.im[at]!
@@ -71,6 +128,7 @@ function squares(work: CrestWork, a: Sample, b: Sample, at: number, third: numbe
   square[k + 4] = 0.6 * (r2 * r2 + i2 * i2) + 0.4 * (r1 * r3 + i1 * i3)
   square[k + 5] = r2 * r3 + i2 * i3
   square[k + 6] = r3 * r3 + i3 * i3
+  if (!plain) return
   plainRe[k] = r0 * r0 - i0 * i0
   plainRe[k + 1] = r0 * r1 - i0 * i1
   plainRe[k + 2] = 0.6 * (r1 * r1 - i1 * i1) + 0.4 * (r0 * r2 - i0 * i2)
@@ -87,38 +145,11 @@ function squares(work: CrestWork, a: Sample, b: Sample, at: number, third: numbe
   plainIm[k + 6] = 2 * r3 * i3
 }
 
-/**
- * Squared objective as Bernstein coefficients. Amplitudes of orders add: (sum A_o)² is at most
- * sum A_o² / w_o for any shares w_o that sum to 1, and equal where they are the orders' own shares.
- */
-function combineOrders(work: CrestWork, axes: number, orders: number, q: number): void {
-  const { one, sum } = work
-  if (orders === 1) {
-    ofOrder(work, axes, 0, q, sum)
-    return
-  }
-  let whole = 0
-  for (let o = 0; o < orders; o++) {
-    ofOrder(work, axes, o, q, one)
-    whole += meanAmplitude(one)
-  }
-  sum.fill(0)
-  for (let o = 0; o < orders; o++) {
-    ofOrder(work, axes, o, q, one)
-    const share = Math.max(meanAmplitude(one) / whole, 1e-6) / (1 + 1e-6 * orders)
-    for (let k = 0; k < 7; k++) sum[k]! += one[k]! / share
-  }
-}
-
-function meanAmplitude(one: Float64Array): number {
-  return Math.sqrt(Math.max(0, one[0]!)) + Math.sqrt(Math.max(0, one[6]!)) + 1e-300
-}
-
-function ofOrder(work: CrestWork, axes: number, o: number, q: number, target: Float64Array): void {
-  const { square, plainRe, plainIm } = work
+/** Squared objective of one order: |F_d|², or (|F|² + |F.F|) / 2, of which a sum of |coefficients| is no less. */
+function ofOrder({ square, plainRe, plainIm, byOrder }: CrestWork, axes: number, o: number, q: number): void {
   for (let k = 0; k < 7; k++) {
     if (q < axes) {
-      target[k] = square[(3 * o + q) * 7 + k]!
+      byOrder[o * 7 + k] = square[(3 * o + q) * 7 + k]!
       continue
     }
     let size = 0
@@ -130,6 +161,31 @@ function ofOrder(work: CrestWork, axes: number, o: number, q: number, target: Fl
       re += plainRe[at]!
       im += plainIm[at]!
     }
-    target[k] = (size + Math.sqrt(re * re + im * im)) / 2
+    byOrder[o * 7 + k] = (size + Math.sqrt(re * re + im * im)) / 2
   }
+}
+
+/**
+ * Amplitudes of orders add: (sum A_o)² is at most sum A_o² / w_o for any shares w_o that sum to 1, and
+ * equal where they are the orders' own shares.
+ */
+function combineOrders({ byOrder, together }: CrestWork, orders: number): void {
+  if (orders === 1) {
+    for (let k = 0; k < 7; k++) together[k] = byOrder[k]!
+    return
+  }
+  let whole = 0
+  for (let o = 0; o < orders; o++) whole += meanAmplitude(byOrder, o)
+  together.fill(0)
+  for (let o = 0; o < orders; o++) {
+    const share = (meanAmplitude(byOrder, o) / whole + LEAST_SHARE) / (1 + LEAST_SHARE * orders)
+    for (let k = 0; k < 7; k++) together[k]! += byOrder[o * 7 + k]! / share
+  }
+}
+
+/** Keeps an order that stands still at both ends from counting without bound. */
+const LEAST_SHARE = 1e-7
+
+function meanAmplitude(byOrder: Float64Array, o: number): number {
+  return Math.sqrt(Math.max(0, byOrder[o * 7]!)) + Math.sqrt(Math.max(0, byOrder[o * 7 + 6]!)) + 1e-300
 }

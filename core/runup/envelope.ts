@@ -1,6 +1,7 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
 import type { March } from './march.ts'
-import { evaluateSignal, fillSignal, loadSignal, sample, signalWork, type SignalWork } from './signal.ts'
+import { enterPanel, motionOf, sampleAt, type Motion } from './motion.ts'
+import { emptySignal, readSignal } from './signal.ts'
 import { speedsAt } from './speed-course.ts'
 import type { Watch } from './watch.ts'
 
@@ -30,19 +31,19 @@ interface Top {
  */
 export function envelopeOf(march: March, watch: Watch, top: Top, samples: number): Curve {
   const { plan } = march
-  const signal = signalWork(march)
-  const slot = sample(march.loads.length)
+  const motion = motionOf(march, watch.moves)
+  const signal = emptySignal(march.loads.length)
+  const resultant = watch.axes.length === 1 ? 0 : watch.axes.length
   const time: number[] = []
   const value: number[] = []
   const put = (panel: number, x: number) => {
-    evaluateSignal(signal, x, slot)
+    readSignal(motion, watch, sampleAt(motion, x), signal)
     time.push(plan.time[panel]! + plan.half[panel]! * x)
-    value.push(slot.value[watch.axes.length === 1 ? 0 : watch.axes.length]!)
+    value.push(signal.value[resultant]!)
   }
   for (let panel = 0; panel < plan.count; panel++) {
-    fillSignal(signal, panel, watch.moves)
-    loadSignal(signal, watch, top.value)
-    const count = samplesFor(signal, watch, top.value)
+    enterPanel(motion, panel)
+    const count = samplesFor(motion, watch, top.value)
     for (let i = 0; i < count; i++) {
       const x = -1 + (2 * i) / count
       const next = x + 2 / count
@@ -60,14 +61,13 @@ export function envelopeOf(march: March, watch: Watch, top: Top, samples: number
   }
 }
 
-function samplesFor(signal: SignalWork, watch: Watch, peak: number): number {
-  const objective = watch.axes.length === 1 ? 0 : watch.axes.length
+function samplesFor({ panels, free, march, orders }: Motion, watch: Watch, peak: number): number {
+  const { count } = march.poles
   let beats = 0
-  for (let o = 0; o < signal.orders; o++) {
-    const first = o * signal.march.poles.count
-    for (let v = first; v < first + signal.vibrations[o]!; v++) {
-      if (signal.weightSize[v * 4 + objective]! < VISIBLE * peak) continue
-      beats = Math.max(beats, Math.abs(signal.kappaIm[v]!) / Math.PI)
+  for (let o = 0; o < orders; o++) {
+    for (let j = 0; j < count; j++) {
+      if (watch.all.state[j]! * free[o * count + j]! < VISIBLE * peak) continue
+      beats = Math.max(beats, Math.abs(panels[o]!.panel.kappaIm[j]!) / Math.PI)
     }
   }
   return Math.min(MOST_PER_PANEL, Math.max(SMOOTH, Math.ceil(PER_BEAT * beats)))

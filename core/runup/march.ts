@@ -1,6 +1,6 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
 import type { Poles } from '../network/poles.ts'
-import { fillPanel, forcedModes, panelEnd, panelWork, TERMS, type PanelWork } from './panel.ts'
+import { fillPanel, forcedModes, panelEnd, panelWork, TERMS, type Panel, type PanelWork } from './panel.ts'
 import type { PanelPlan } from './panel-plan.ts'
 import type { StateLoad } from './state-load.ts'
 
@@ -25,15 +25,9 @@ export const stateAt = ({ plan, poles }: March, order: number, panel: number): n
 
 /**
  * Takes the states through the whole course, panel by panel.
- * @param velocity whether anything watched depends on velocities
  * @returns null when the motion it starts from has no bound: a resonance without damping at the first speed
  */
-export function marchThrough(
-  plan: PanelPlan,
-  poles: Poles,
-  loads: readonly StateLoad[],
-  velocity: boolean,
-): March | null {
+export function marchThrough(plan: PanelPlan, poles: Poles, loads: readonly StateLoad[]): March | null {
   const { count, modes } = poles
   const states = loads.length * (plan.count + 1) * count
   const work = panelWork(poles)
@@ -59,13 +53,10 @@ export function marchThrough(
     for (let p = 0; p < plan.count; p++) {
       fillPanel(work, plan, p, poles, loads[o]!, march.stateRe, march.stateIm, stateAt(march, o, p))
       panelEnd(work.panel, march.stateRe, march.stateIm, stateAt(march, o, p + 1))
-      forcedModes(work, poles, velocity)
+      forcedModes(work, poles)
       const { panel } = work
       const at = o * plan.count + p
-      for (let r = 0; r < modes; r++) {
-        march.displacement[at * modes + r] = boundOf(panel.displacementRe, panel.displacementIm, r * TERMS)
-        if (velocity) march.velocity[at * modes + r] = boundOf(panel.velocityRe, panel.velocityIm, r * TERMS)
-      }
+      boundModes(panel, modes, plan.half[p]!, march.displacement, march.velocity, at * modes)
       for (let j = 0; j < count; j++) {
         march.free[at * count + j] = Math.hypot(panel.freeRe[j]!, panel.freeIm[j]!)
       }
@@ -75,18 +66,35 @@ export function marchThrough(
   return march
 }
 
-/** No power series is larger than the sum of its coefficients on -1 to 1. */
-function boundOf(re: Float64Array, im: Float64Array, at: number): number {
-  let sum = 0
-  for (let k = at; k < at + TERMS; k++) sum += Math.sqrt(re[k]! * re[k]! + im[k]! * im[k]!)
-  return sum
+/** No power series is larger than the sum of its coefficients on -1 to 1; velocity is P' / half + i rate P. */
+function boundModes(
+  { modesRe, modesIm, rate }: Panel,
+  modes: number,
+  half: number,
+  displacement: Float64Array,
+  velocity: Float64Array,
+  at: number,
+): void {
+  for (let r = 0; r < modes; r++) {
+    let size = 0
+    let slope = 0
+    for (let k = 0; k < TERMS; k++) {
+      const p = modesRe[r * TERMS + k]!
+      const q = modesIm[r * TERMS + k]!
+      const one = Math.sqrt(p * p + q * q)
+      size += one
+      slope += k * one
+    }
+    displacement[at + r] = size
+    velocity[at + r] = slope / half + Math.abs(rate[0]!) * size
+  }
 }
 
 /** Fills a panel's motion for an order once more. */
-export function refill(march: March, order: number, panel: number, work: PanelWork, velocity: boolean): void {
+export function refill(march: March, order: number, panel: number, work: PanelWork): void {
   const { plan, poles, loads, stateRe, stateIm } = march
   fillPanel(work, plan, panel, poles, loads[order]!, stateRe, stateIm, stateAt(march, order, panel))
-  forcedModes(work, poles, velocity)
+  forcedModes(work, poles)
 }
 
 /** The states at a speed that has been the same for ever: force / (i w - lambda), w = order · speed. */

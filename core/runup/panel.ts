@@ -26,11 +26,12 @@ export interface Panel {
   readonly freeIm: Float64Array
   readonly kappaRe: Float64Array
   readonly kappaIm: Float64Array
-  /** forced motion of the modes, displacement and velocity: power k of mode r at r TERMS + k */
-  readonly displacementRe: Float64Array
-  readonly displacementIm: Float64Array
-  readonly velocityRe: Float64Array
-  readonly velocityIm: Float64Array
+  /** forced displacement of the modes: power k of mode r at r TERMS + k; the highest power that counts */
+  readonly modesRe: Float64Array
+  readonly modesIm: Float64Array
+  readonly top: Int32Array
+  /** the straight line's rate, order · speed in the middle [rad/s] */
+  readonly rate: Float64Array
   /** order · rest at the panel's begin and end [rad] */
   readonly phase: Float64Array
   /** size of the series' last terms against their first: what has been cut */
@@ -58,10 +59,10 @@ export function panelWork({ count, modes }: Poles): PanelWork {
       freeIm: make(count),
       kappaRe: make(count),
       kappaIm: make(count),
-      displacementRe: make(modes * TERMS),
-      displacementIm: make(modes * TERMS),
-      velocityRe: make(modes * TERMS),
-      velocityIm: make(modes * TERMS),
+      modesRe: make(modes * TERMS),
+      modesIm: make(modes * TERMS),
+      top: new Int32Array(1),
+      rate: make(1),
       phase: make(2),
       cut: make(1),
     },
@@ -95,6 +96,7 @@ export function fillPanel(
   forceSeries(work, load.order, half)
   const { panel, speed } = work
   const w = load.order * speed[0]!
+  panel.rate[0] = w
   const turnRe = Math.cos(panel.phase[0]!)
   const turnIm = Math.sin(panel.phase[0]!)
   for (let j = 0; j < panel.count; j++) {
@@ -264,44 +266,45 @@ function freeMotion(panel: Panel, j: number, beginRe: number, beginIm: number): 
 /**
  * Sums the forced motion of the states into that of the modes. In the modes what two states of one
  * mode do against each other has gone, so that bounds of their size are close.
- * @param velocity whether velocities are wanted too
  */
-export function forcedModes({ panel }: PanelWork, poles: Poles, velocity: boolean): void {
-  const { displacementRe, displacementIm, velocityRe, velocityIm } = panel
-  displacementRe.fill(0)
-  displacementIm.fill(0)
-  velocityRe.fill(0)
-  velocityIm.fill(0)
+export function forcedModes({ panel }: PanelWork, poles: Poles): void {
+  const { modesRe, modesIm, forcedRe, forcedIm, terms } = panel
+  modesRe.fill(0)
+  modesIm.fill(0)
   for (let r = 0; r < poles.modes; r++) {
+    const to = r * TERMS
     for (let j = 0; j < poles.count; j++) {
-      const p = poles.shapeRe[r * poles.count + j]!
-      const q = poles.shapeIm[r * poles.count + j]!
-      if (p === 0 && q === 0) continue
-      addSeries(panel, j, p, q, displacementRe, displacementIm, r * TERMS)
-      if (!velocity) continue
-      const x = poles.re[j]!
-      const y = poles.im[j]!
-      addSeries(panel, j, p * x - q * y, p * y + q * x, velocityRe, velocityIm, r * TERMS)
+      const a = poles.shapeRe[r * poles.count + j]!
+      const b = poles.shapeIm[r * poles.count + j]!
+      if (a === 0 && b === 0) continue
+      const from = j * TERMS
+      const end = terms[j]!
+      for (let k = 0; k < end; k++) {
+        const p = forcedRe[from + k]!
+        const q = forcedIm[from + k]!
+        modesRe[to + k]! += a * p - b * q
+        modesIm[to + k]! += a * q + b * p
+      }
     }
   }
+  panel.top[0] = highestPower(modesRe, modesIm, poles.modes)
 }
 
-function addSeries(
-  { forcedRe, forcedIm, terms }: Panel,
-  j: number,
-  a: number,
-  b: number,
-  re: Float64Array,
-  im: Float64Array,
-  at: number,
-): void {
-  const from = j * TERMS
-  for (let k = 0; k < terms[j]!; k++) {
-    const p = forcedRe[from + k]!
-    const q = forcedIm[from + k]!
-    re[at + k]! += a * p - b * q
-    im[at + k]! += a * q + b * p
+/** Powers smaller than this share of the largest of a series are rounding. */
+const ROUNDING = 1e-15
+
+function highestPower(re: Float64Array, im: Float64Array, modes: number): number {
+  let top = 0
+  for (let r = 0; r < modes; r++) {
+    let largest = 0
+    for (let k = r * TERMS; k < (r + 1) * TERMS; k++) {
+      largest = Math.max(largest, Math.abs(re[k]!) + Math.abs(im[k]!))
+    }
+    for (let k = TERMS - 1; k > top; k--) {
+      if (Math.abs(re[r * TERMS + k]!) + Math.abs(im[r * TERMS + k]!) > ROUNDING * largest) top = k
+    }
   }
+  return top
 }
 
 /** States at the panel's end against the true phase, written from `at` on. */

@@ -1,15 +1,17 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
-import { amplitudesOfStates, amplitudeWork, objectivesOf } from './amplitude.ts'
-import { crests, crestWork, type CrestWork } from './crest.ts'
+import { amplitudesOfStates, amplitudeWork, objectivesOf, type AmplitudeWork } from './amplitude.ts'
+import { crestHeight, crestPlace, crestWork, loadCubics, mayExceed, type CrestWork } from './crest.ts'
 import { stateAt, type March } from './march.ts'
+import { BEGIN, END, enterPanel, halfOf, MIDDLE, motionOf, sampleAt, type Motion } from './motion.ts'
 import {
-  evaluateSignal,
-  fillSignal,
-  loadSignal,
-  sample,
-  signalWork,
-  type Sample,
-  type SignalWork,
+  emptySignal,
+  fourthBound,
+  freeBound,
+  freeFourthBound,
+  readForced,
+  readSignal,
+  secondBound,
+  type Signal,
 } from './signal.ts'
 import type { Watch, WatchSize } from './watch.ts'
 
@@ -22,31 +24,41 @@ export interface Peaks {
 }
 
 /** What a direction or resultant may still hide above the value found, as a share of it. */
-export const PEAK_TOLERANCE = 1e-5
+export const PEAK_TOLERANCE = 5e-5
 /** An interval halved as often as this cannot be told from a point. */
-const DEEPEST = 44
-/** More samples for one quantity in one panel mean that its beats are not worth following. */
-const MOST_SAMPLES = 20_000
+const DEEPEST = 40
+/** The whole panel is no half of anything. */
+const NONE = -1
+/** More intervals of one panel mean that its beats are not worth following. */
+const MOST_INTERVALS = 20_000
 
 interface Search {
   readonly march: March
   readonly watch: Watch
-  readonly signal: SignalWork
+  readonly motion: Motion
   readonly crest: CrestWork
   readonly best: Peaks
-  /** both ends of a panel, then the middle of each interval on the way down; made when first needed */
-  readonly slots: Sample[]
-  /** whether an objective's best has moved in this panel, and how far around it lies open */
+  /** quantities at both ends of the panel, then at the middle of each interval on the way down, then for one-off looks */
+  readonly slots: Signal[]
+  readonly spare: Signal
+  /** whether an objective can exceed its best in the panel at all, and whether it has, how far around it lies open */
+  readonly alive: Uint8Array
   readonly improved: Uint8Array
   readonly width: Float64Array
+  /** bounds of the forced motion's derivatives */
+  readonly second: Float64Array
+  readonly fourth: Float64Array
+  /** where cubics have crests */
+  readonly crests: Float64Array
   readonly tolerance: number
-  samples: number
+  intervals: number
   panel: number
 }
 
 /**
  * Peaks of every watched quantity over the whole course. Panels whose bound lies below what has been
- * found are passed over; in the others an interval is split until it cannot hide more than the tolerance.
+ * found are passed over; in the others intervals are halved until they cannot hold more, or a cubic
+ * tells where their crest is.
  * @returns the peaks, and whether every search came to its end
  */
 export function findPeaks(
@@ -54,29 +66,30 @@ export function findPeaks(
   watches: readonly Watch[],
   tolerance = PEAK_TOLERANCE,
 ): { readonly peaks: readonly Peaks[]; readonly complete: boolean } {
-  const signal = signalWork(march)
   const orders = march.loads.length
-  const crest = crestWork(orders)
-  const slots = [sample(orders), sample(orders), sample(orders)]
-  const searches = watches.map((watch) => newSearch(march, watch, signal, crest, slots, tolerance))
-  const first = new Set<number>()
+  const shared = {
+    motion: motionOf(
+      march,
+      watches.some(({ moves }) => moves),
+    ),
+    crest: crestWork(orders),
+    slots: [emptySignal(orders), emptySignal(orders)],
+    spare: emptySignal(orders),
+  }
+  const searches = watches.map((watch) => newSearch(march, watch, shared, tolerance))
   const scratch = amplitudeWork()
+  const first = new Set<number>()
   for (const search of searches) {
     sampleBegins(search, scratch)
     for (const panel of search.best.panel) first.add(panel)
   }
   let complete = true
   const visit = (panel: number) => {
-    let filled = false
+    let entered = false
     for (const search of searches) {
       if (!panelMayExceed(search, panel)) continue
-      if (!filled)
-        fillSignal(
-          signal,
-          panel,
-          watches.some(({ moves }) => moves),
-        )
-      filled = true
+      if (!entered) enterPanel(shared.motion, panel)
+      entered = true
       complete = searchPanel(search, panel) && complete
     }
   }
@@ -88,51 +101,39 @@ export function findPeaks(
 function newSearch(
   march: March,
   watch: Watch,
-  signal: SignalWork,
-  crest: CrestWork,
-  slots: Sample[],
+  shared: Pick<Search, 'motion' | 'crest' | 'slots' | 'spare'>,
   tolerance: number,
 ): Search {
   const objectives = objectivesOf(watch)
   return {
     march,
     watch,
-    signal,
-    crest,
+    ...shared,
     best: {
       value: new Float64Array(objectives),
       panel: new Int32Array(objectives),
       x: new Float64Array(objectives).fill(-1),
     },
-    slots,
+    alive: new Uint8Array(objectives),
     improved: new Uint8Array(objectives),
     width: new Float64Array(objectives),
+    second: new Float64Array(objectives),
+    fourth: new Float64Array(objectives),
+    crests: new Float64Array(objectives),
     tolerance,
-    samples: 0,
+    intervals: 0,
     panel: 0,
   }
 }
 
 /** A first idea of the peaks from the states that are known anyway. */
-function sampleBegins(
-  { march, watch, best, slots }: Search,
-  scratch: ReturnType<typeof amplitudeWork>,
-): void {
+function sampleBegins({ march, watch, best, spare }: Search, scratch: AmplitudeWork): void {
   const { plan, poles, loads, stateRe, stateIm } = march
-  const { value } = slots[0]!
+  const { value } = spare
   const apart = (plan.count + 1) * poles.count
   for (let panel = 0; panel < plan.count; panel++) {
-    amplitudesOfStates(
-      scratch,
-      watch,
-      loads.length,
-      apart,
-      stateRe,
-      stateIm,
-      stateAt(march, 0, panel),
-      value,
-      0,
-    )
+    const at = stateAt(march, 0, panel)
+    amplitudesOfStates(scratch, watch, loads.length, apart, stateRe, stateIm, at, value, 0)
     for (let q = 0; q < best.value.length; q++) {
       if (value[q]! <= best.value[q]!) continue
       best.value[q] = value[q]!
@@ -141,12 +142,18 @@ function sampleBegins(
   }
 }
 
-function panelMayExceed({ march, watch, best, tolerance }: Search, panel: number): boolean {
+const sizeOf = (watch: Watch, q: number): WatchSize =>
+  q < watch.axes.length ? watch.axes[q]!.size : watch.all
+
+/** Marks what may exceed its best in a panel. @returns whether anything may */
+function panelMayExceed({ march, watch, best, tolerance, alive }: Search, panel: number): boolean {
+  let any = false
   for (let q = 0; q < best.value.length; q++) {
-    const size = q < watch.axes.length ? watch.axes[q]!.size : watch.all
-    if (panelBound(march, size, panel, watch.moves) > best.value[q]! * (1 + tolerance)) return true
+    const may = panelBound(march, sizeOf(watch, q), panel, watch.moves) > best.value[q]! * (1 + tolerance)
+    alive[q] = may ? 1 : 0
+    any ||= may
   }
-  return false
+  return any
 }
 
 function panelBound(march: March, size: WatchSize, panel: number, moves: boolean): number {
@@ -165,93 +172,123 @@ function panelBound(march: March, size: WatchSize, panel: number, moves: boolean
 
 /** @returns whether nothing was given up */
 function searchPanel(search: Search, panel: number): boolean {
-  const { signal, slots, best, improved } = search
+  const { motion, watch, slots, improved, second, fourth } = search
   search.panel = panel
-  search.samples = 0
-  loadSignal(signal, search.watch, leastThatMatters(best.value))
+  search.intervals = 0
   improved.fill(0)
-  const begin = slots[0]!
-  const end = slots[1]!
-  take(search, -1, begin, 2)
-  take(search, 1, end, 2)
-  const complete = split(search, -1, begin, 1, end, 0)
+  for (let q = 0; q < second.length; q++) {
+    second[q] = secondBound(motion, watch, sizeOf(watch, q))
+    fourth[q] = fourthBound(motion, watch, sizeOf(watch, q))
+  }
+  read(search, -1, BEGIN, slots[0]!, 2)
+  read(search, 1, END, slots[1]!, 2)
+  const complete = searchInterval(search, -1, slots[0]!, 1, slots[1]!, NONE, 'left', 0)
   for (let q = 0; q < improved.length; q++) if (improved[q] === 1) polish(search, q)
   return complete
 }
 
-/** The smallest of the peaks, but a direction that hardly moves need not be as exact as the others. */
-function leastThatMatters(values: Float64Array): number {
-  let least = Infinity
-  let most = 0
-  for (const value of values) {
-    least = Math.min(least, value)
-    most = Math.max(most, value)
+/**
+ * Reads the quantity and what bounds it from a sample on.
+ * @param length of the intervals that begin or end there
+ */
+function read(search: Search, x: number, sample: number, signal: Signal, length: number): void {
+  const { motion, watch, alive, best } = search
+  readSignal(motion, watch, sample, signal)
+  note(search, x, signal, length)
+  let beating = false
+  for (let q = 0; q < alive.length; q++) {
+    if (alive[q] === 0) continue
+    signal.free[q] = freeBound(motion, sizeOf(watch, q), sample)
+    signal.freeFourth[q] = freeFourthBound(motion, sizeOf(watch, q), sample)
+    // where cubics cannot follow the beats, forced motion and beats are bounded apart
+    beating ||= quartic(length) * signal.freeFourth[q]! > 0.1 * best.value[q]!
   }
-  return Math.max(least, 1e-3 * most)
+  if (beating) readForced(motion, watch, sample, signal)
+  else signal.forced.fill(Infinity)
 }
 
-function take(search: Search, x: number, slot: Sample, width: number): void {
-  const { signal, best, improved } = search
-  evaluateSignal(signal, x, slot)
-  search.samples++
+const quartic = (length: number): number => (length * length * length * length) / 384
+
+/** Keeps what a sample shows where it is more than the best. */
+function note({ best, improved, width, panel }: Search, x: number, signal: Signal, around: number): void {
   for (let q = 0; q < best.value.length; q++) {
-    if (slot.value[q]! <= best.value[q]!) continue
-    best.value[q] = slot.value[q]!
-    best.panel[q] = search.panel
+    if (signal.value[q]! <= best.value[q]!) continue
+    best.value[q] = signal.value[q]!
+    best.panel[q] = panel
     best.x[q] = x
     improved[q] = 1
-    search.width[q] = width
+    width[q] = around
   }
 }
 
-function split(search: Search, a: number, atA: Sample, b: number, atB: Sample, depth: number): boolean {
-  const share = crestWithin(search, b - a, atA, atB)
-  if (share === 0) return true
-  if (depth >= DEEPEST || search.samples > MOST_SAMPLES) return false
-  const middle = a + share * (b - a)
-  const slot = (search.slots[depth + 2] ??= sample(search.signal.orders))
-  take(search, middle, slot, Math.min(share, 1 - share) * (b - a))
-  const last = search.best.value.length - 1
+/**
+ * @param a,b ends of the interval, with the quantity there
+ * @param parent sample in the middle of the interval of which this is the half on `side`
+ */
+function searchInterval(
+  search: Search,
+  a: number,
+  atA: Signal,
+  b: number,
+  atB: Signal,
+  parent: number,
+  side: 'left' | 'right',
+  depth: number,
+): boolean {
+  if (!mustSplit(search, a, atA, b, atB)) return true
+  if (depth >= DEEPEST || ++search.intervals > MOST_INTERVALS) return false
+  const { motion } = search
+  const x = (a + b) / 2
+  const middle = parent === NONE ? MIDDLE : halfOf(motion, parent, side, x)
+  const signal = (search.slots[depth + 2] ??= emptySignal(motion.orders))
+  read(search, x, middle, signal, (b - a) / 2)
   // the side with the larger end first: what it finds spares the other
+  const last = search.best.value.length - 1
   if (atA.value[last]! > atB.value[last]!) {
-    const left = split(search, a, atA, middle, slot, depth + 1)
-    return split(search, middle, slot, b, atB, depth + 1) && left
+    const left = searchInterval(search, a, atA, x, signal, middle, 'left', depth + 1)
+    return searchInterval(search, x, signal, b, atB, middle, 'right', depth + 1) && left
   }
-  const right = split(search, middle, slot, b, atB, depth + 1)
-  return split(search, a, atA, middle, slot, depth + 1) && right
+  const right = searchInterval(search, x, signal, b, atB, middle, 'right', depth + 1)
+  return searchInterval(search, a, atA, x, signal, middle, 'left', depth + 1) && right
 }
 
-/** Where to split an interval, as a share of its length; 0 when it cannot hold more than has been found. */
-function crestWithin(search: Search, length: number, atA: Sample, atB: Sample): number {
-  const { best, signal, tolerance, crest } = search
-  const eighth = (length * length) / 8
-  const left = length ** 4 / 384
-  crests(crest, signal, atA, atB, length)
-  let share = 0
-  let most = 1 + tolerance
-  for (let q = 0; q < best.value.length; q++) {
-    const together = crest.bound[q]! + left * (signal.fourth[q]! + atA.freeFourth[q]!)
-    const apart = Math.max(atA.forced[q]!, atB.forced[q]!) + eighth * signal.second[q]! + atA.free[q]!
-    const excess = Math.min(together, apart) / best.value[q]!
-    if (!(excess > most)) continue
-    most = excess
-    // where the cubic says little the crest's place is a guess, and half is safer
-    share = crest.bound[q]! > 0.5 * together ? Math.min(0.9, Math.max(0.1, crest.at[q]!)) : 0.5
+/** Looks at the crests that cubics tell; whether an interval may hide more than they can tell. */
+function mustSplit(search: Search, a: number, atA: Signal, b: number, atB: Signal): boolean {
+  const { best, alive, watch, motion, crest, second, fourth, tolerance } = search
+  const axes = watch.axes.length
+  const length = b - a
+  loadCubics(crest, axes, motion.orders, atA, atB, length)
+  let found = 0
+  for (let q = 0; q < alive.length; q++) {
+    if (alive[q] === 0) continue
+    const limit = best.value[q]! * (1 + tolerance)
+    const left = quartic(length) * (fourth[q]! + atA.freeFourth[q]!)
+    if (left < limit && !mayExceed(crest, axes, motion.orders, q, limit - left)) continue
+    const forced = Math.max(atA.forced[q]!, atB.forced[q]!) + (length * length * second[q]!) / 8
+    if (forced + atA.free[q]! <= limit) continue
+    if (left > 0.5 * tolerance * best.value[q]!) return true
+    const place = crestPlace(crest)
+    if (crestHeight(crest, place) + left <= limit) continue
+    search.crests[found++] = a + place * length
   }
-  return share
+  for (let i = 0; i < found; i++) {
+    const x = search.crests[i]!
+    readSignal(motion, watch, sampleAt(motion, x), search.spare)
+    note(search, x, search.spare, length / 8)
+  }
+  return false
 }
 
 /** Moves a peak onto the top of the curve through three samples, closer each time. */
 function polish(search: Search, q: number): void {
-  const { best, signal, slots } = search
+  const { best, motion, watch, spare } = search
   if (best.panel[q] !== search.panel) return
-  const slot = slots[0]!
   const at = (x: number) => {
-    evaluateSignal(signal, x, slot)
-    return slot.value[q]!
+    readSignal(motion, watch, sampleAt(motion, x), spare)
+    return spare.value[q]!
   }
   let step = Math.min(search.width[q]!, 0.05)
-  for (let round = 0; round < 3; round++) {
+  for (let round = 0; round < 2; round++) {
     const x = Math.min(1 - step, Math.max(-1 + step, best.x[q]!))
     const left = at(x - step)
     const middle = at(x)

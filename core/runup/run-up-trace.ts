@@ -58,7 +58,6 @@ export function runUpTrace(
           planPanels(course, Math.max(...form.orders.map(({ order }) => order))),
           form.poles,
           form.orders,
-          false,
         )
   if (form === null || march === null) {
     return {

@@ -64,12 +64,7 @@ export function runUpOf(
     problems.push(...found.problems)
     if (found.course === null) return null
     const plan = planPanels(found.course, Math.max(...orders.map(({ order }) => order)))
-    const march = marchThrough(
-      plan,
-      poles,
-      orders,
-      watched.watches.some(({ moves }) => moves),
-    )
+    const march = marchThrough(plan, poles, orders)
     if (march === null) {
       problems.push({
         field: `runUp.${direction}.law`,

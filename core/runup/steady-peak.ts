@@ -6,9 +6,9 @@ import { amplitudesOfStates, amplitudeWork, objectivesOf } from './amplitude.ts'
 import type { Watch } from './watch.ts'
 
 /** Speeds looked at besides those about the resonances. */
-const EVEN = 48
+const EVEN = 32
 /** Distances from a resonance in half-power widths. */
-const AROUND = [-8, -4, -2, -1.2, -0.7, -0.35, 0, 0.35, 0.7, 1.2, 2, 4, 8] as const
+const AROUND = [-6, -2.5, -1.2, -0.5, 0, 0.5, 1.2, 2.5, 6] as const
 /** Rounds of moving onto the top of the curve through three points. */
 const ROUNDS = 6
 /** A share of a quantity's drive below which a mode takes part by rounding only. */

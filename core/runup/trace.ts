@@ -1,6 +1,7 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
 import type { March } from './march.ts'
-import { evaluateSignal, fillSignal, loadSignal, sample, signalWork } from './signal.ts'
+import { enterPanel, motionOf, sampleAt } from './motion.ts'
+import { emptySignal, readSignal } from './signal.ts'
 import type { Watch } from './watch.ts'
 
 /** A watched quantity against time: complex, orders together, the shaft at angle 0 at the start; the motion is the real part. */
@@ -13,8 +14,8 @@ export interface Trace {
 /** @param times since the start, rising, within the course [s] */
 export function traceOf(march: March, watch: Watch, times: Float64Array): Trace {
   const { plan, loads } = march
-  const signal = signalWork(march)
-  const scratch = sample(loads.length)
+  const motion = motionOf(march, watch.moves)
+  const signal = emptySignal(loads.length)
   const re = watch.axes.map(() => new Float64Array(times.length))
   const im = watch.axes.map(() => new Float64Array(times.length))
   let panel = -1
@@ -22,21 +23,18 @@ export function traceOf(march: March, watch: Watch, times: Float64Array): Trace 
   for (let i = 0; i < times.length; i++) {
     const time = times[i]!
     while (next < plan.count - 1 && time > plan.time[next]! + plan.half[next]!) next++
-    if (next !== panel) {
-      panel = next
-      fillSignal(signal, panel, watch.moves)
-      loadSignal(signal, watch, 0)
-    }
+    if (next !== panel) enterPanel(motion, next)
+    panel = next
     const half = plan.half[panel]!
     const x = (time - plan.time[panel]!) / half
-    const straight = plan.angle[panel]! + half * signal.panels[0]!.speed[0]! * x
-    evaluateSignal(signal, x, scratch)
+    const straight = plan.angle[panel]! + half * motion.panels[0]!.speed[0]! * x
+    readSignal(motion, watch, sampleAt(motion, x), signal)
     for (let o = 0; o < loads.length; o++) {
       const cos = Math.cos(loads[o]!.order * straight)
       const sin = Math.sin(loads[o]!.order * straight)
       for (let d = 0; d < watch.axes.length; d++) {
-        re[d]![i]! += scratch.re[3 * o + d]! * cos - scratch.im[3 * o + d]! * sin
-        im[d]![i]! += scratch.re[3 * o + d]! * sin + scratch.im[3 * o + d]! * cos
+        re[d]![i]! += signal.re[3 * o + d]! * cos - signal.im[3 * o + d]! * sin
+        im[d]![i]! += signal.re[3 * o + d]! * sin + signal.im[3 * o + d]! * cos
       }
     }
   }

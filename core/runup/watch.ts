@@ -13,7 +13,8 @@ export interface Watch {
   readonly axes: readonly WatchAxis[]
   /** lengths of the weights over the directions */
   readonly all: WatchSize
-  /** whether any velocity takes part */
+  /** whether any imaginary weight, any velocity takes part */
+  readonly turns: boolean
   readonly moves: boolean
 }
 
@@ -152,6 +153,7 @@ function watchOf(poles: Poles, axes: readonly ModalWeights[]): Watch {
       velocity: lengths(poles.modes, (size) => size.velocity),
       state: lengths(poles.count, (size) => size.state),
     },
+    turns: axes.some(({ im }) => im.some((value) => value !== 0)),
     moves: axes.some(({ velocity }) => velocity.some((value) => value !== 0)),
   }
 }

@@ -45,7 +45,7 @@ export function runUpTask(): RunUpOutput {
   const { highest, ramp, hold } = RUN_UP_CASE
   const speed = 2 * Math.PI * highest
   const plan = planPanels(courseOf([straight(ramp, 0, speed), straight(hold, speed, speed)]), 1)
-  const march = marchThrough(plan, form.poles, form.orders, false)
+  const march = marchThrough(plan, form.poles, form.orders)
   if (march === null) throw new Error('no motion')
   const watches = system.elements.map((element) => watchRows(form.modal, travelRows(system, element)))
   return findPeaks(march, watches).peaks.map(({ value }) => [...value])
