@@ -44,6 +44,12 @@ const manifest = JSON.parse(readFileSync(join(folder, 'package.json'), 'utf8')) 
 }
 runtime.app.setManifest(folder, manifest.version)
 
+// a test run that is broken off leaves nothing behind
+const parent = process.ppid
+setInterval(() => {
+  if (process.ppid !== parent) runtime.app.exit(1)
+}, 1000).unref()
+
 const limit = setTimeout(() => {
   process.stderr.write('main waits at its top level: Electron would never become ready\n')
   runtime.app.exit(1)
