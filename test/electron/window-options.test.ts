@@ -29,16 +29,16 @@ describe('usablePlace', () => {
 describe('readMainArguments', () => {
   it("takes the library and a project file from among the runtime's own switches", () => {
     expect(
-      readMainArguments(['.', '--no-sandbox', '--library', 'b.sqlite', 'fan.stillbed.json'], '/work'),
+      readMainArguments(['.', '--no-sandbox', '--library', 'b.sqlite', 'fan.stillbed.json'], '/home/me'),
     ).toEqual({
-      library: '/work/b.sqlite',
-      file: '/work/fan.stillbed.json',
+      library: '/home/me/b.sqlite',
+      file: '/home/me/fan.stillbed.json',
     })
   })
 
   it('does without', () => {
-    expect(readMainArguments(['.'], '/work')).toEqual({ library: '', file: '' })
-    expect(readMainArguments(['--library'], '/work')).toEqual({ library: '', file: '' })
+    expect(readMainArguments(['.'], '/home/me')).toEqual({ library: '', file: '' })
+    expect(readMainArguments(['--library'], '/home/me')).toEqual({ library: '', file: '' })
   })
 })
 
