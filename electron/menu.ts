@@ -15,7 +15,7 @@ interface MenuSettings {
 }
 
 /** Steps of the job by number; the key is the one that the pages take themselves in a browser. */
-const STEPS = ['Machine', 'Mounts', 'Response', 'Absorber', 'Report']
+const STEPS = ['Machine', 'Mounts', 'Response', 'Run-up', 'Absorber', 'Report']
 
 export function installMenu(settings: MenuSettings, actions: MenuActions): void {
   Menu.setApplicationMenu(Menu.buildFromTemplate(menuTemplate(settings, actions)))

@@ -7,12 +7,14 @@ import { cautionSection, checksumSection } from './sections/cautions.ts'
 import { figureSection } from './sections/figures.ts'
 import { machineInputs } from './sections/inputs-machine.ts'
 import { mountingInputs } from './sections/inputs-mounting.ts'
+import { runUpInputs } from './sections/inputs-run-up.ts'
 import { requirementInputs } from './sections/inputs-requirements.ts'
 import { jobSection, titleBlock } from './sections/job.ts'
 import { methodSection } from './sections/methods.ts'
 import { mountScheduleSection } from './sections/mount-schedule.ts'
 import { modeBlocks } from './sections/results-modes.ts'
 import { responseBlocks } from './sections/results-response.ts'
+import { runUpBlocks } from './sections/results-run-up.ts'
 import { massBlocks, problemBlocks, staticBlocks } from './sections/results-static.ts'
 import { verdictSection } from './sections/verdicts.ts'
 import { writerFor } from './writer.ts'
@@ -37,6 +39,7 @@ export function buildReport(project: Project, evaluation: Evaluation, options: R
     blocks: [
       ...machineInputs(project, evaluation, writer),
       ...mountingInputs(project, writer),
+      ...runUpInputs(project, writer),
       ...requirementInputs(project, writer),
     ],
   }
@@ -53,6 +56,7 @@ export function buildReport(project: Project, evaluation: Evaluation, options: R
       ...modeBlocks(evaluation, writer),
       { kind: 'heading', text: 'Response' },
       ...responseBlocks(project, evaluation, writer),
+      ...runUpBlocks(project, evaluation, writer),
     ],
   }
   const absorbers = absorberSection(project, evaluation, writer)
@@ -72,7 +76,7 @@ export function buildReport(project: Project, evaluation: Evaluation, options: R
       mountScheduleSection(project, evaluation, writer),
       ...(absorbers ? [absorbers] : []),
       methodSection(project),
-      cautionSection(),
+      cautionSection(project),
       checksumSection(checksum),
     ],
   }

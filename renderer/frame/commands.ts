@@ -31,6 +31,8 @@ const FIELDS: readonly (readonly [label: string, step: Step, field: string, also
   ['Exciting sources', 'machine', 'sources', 'unbalance force moment order'],
   ['Mounts on the plan', 'mounts', 'mounting.placed', 'positions layout'],
   ['Mount types', 'mounts', 'mounting.types', 'stiffness damping rated load'],
+  ['Run-up', 'run-up', 'runUp.up', 'start acceleration ramp torque transient'],
+  ['Coast-down', 'run-up', 'runUp.down', 'stop deceleration brake trip transient'],
   ['Requirements', 'response', 'requirements', 'limits verdict'],
   ['Absorbers', 'absorber', 'absorbers', 'tuned mass damper'],
 ]

@@ -22,6 +22,8 @@ export const REQUIREMENT_KINDS: readonly RequirementKind[] = [
   'mountLoad',
   'mountDeflection',
   'absorberStroke',
+  'runUpMotion',
+  'runUpForce',
 ]
 
 /** A requirement of one kind that fits the project; its limit is left to the person who answers for it. */

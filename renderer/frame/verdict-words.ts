@@ -45,8 +45,8 @@ export const DECIDED_ON: Readonly<Record<RequirementKind, Step>> = {
   mountLoad: 'mounts',
   mountDeflection: 'mounts',
   absorberStroke: 'absorber',
-  runUpMotion: 'response',
-  runUpForce: 'response',
+  runUpMotion: 'run-up',
+  runUpForce: 'run-up',
 }
 
 /** Where value and limit stand on a gauge from 0 to 1; null when there is nothing to show. */

@@ -1,12 +1,13 @@
 import { tick } from 'svelte'
 
-export const STEPS = ['machine', 'mounts', 'response', 'absorber', 'report'] as const
+export const STEPS = ['machine', 'mounts', 'response', 'run-up', 'absorber', 'report'] as const
 export type Step = (typeof STEPS)[number]
 
 export const STEP_NAMES: Readonly<Record<Step, string>> = {
   machine: 'Machine',
   mounts: 'Mounts',
   response: 'Response',
+  'run-up': 'Run-up',
   absorber: 'Absorber',
   report: 'Report',
 }
@@ -31,6 +32,7 @@ export const route = new Route()
 /** The step on which a field of the project is edited. */
 export function stepOfField(field: string): Step {
   if (field.startsWith('mounting')) return 'mounts'
+  if (field.startsWith('runUp')) return 'run-up'
   if (field.startsWith('absorbers')) return 'absorber'
   if (field.startsWith('requirements')) return 'response'
   return 'machine'
@@ -56,7 +58,7 @@ const FOCUSABLE = 'input, select, textarea, button, [tabindex]'
 
 /** Project and step in the address: `#/project/<id>/mounts`; null for the Shelf. */
 export function readAddress(hash: string): { readonly id: string; readonly step: Step } | null {
-  const match = /^#\/project\/([0-9a-f-]{36})(?:\/([a-z]+))?$/.exec(hash)
+  const match = /^#\/project\/([0-9a-f-]{36})(?:\/([a-z-]+))?$/.exec(hash)
   if (!match?.[1]) return null
   return { id: match[1], step: STEPS.find((step) => step === match[2]) ?? 'machine' }
 }

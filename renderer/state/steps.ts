@@ -23,6 +23,7 @@ export function stepStates(
     machine,
     mounts,
     response,
+    'run-up': runUpState(project, evaluation, problems),
     absorber: absorberState(project, evaluation, problems),
     report: reportState(project, evaluation, response),
   }
@@ -52,6 +53,19 @@ function responseState(evaluation: Evaluation | null, machine: StepState, mounts
   const names = open.filter((name) => name !== false)
   if (names.length > 0) return { state: 'empty', missing: `waits for ${names.join(' and ')}` }
   return incomplete('nothing excites the machine')
+}
+
+function runUpState(
+  project: Project,
+  evaluation: Evaluation | null,
+  problems: readonly Problem[],
+): StepState {
+  const { enabled, up, down } = project.runUp
+  if (!enabled) return { state: 'empty', missing: 'not looked at' }
+  const found = fromProblems(problems, ['runUp'])
+  if (found.state !== 'done') return found
+  if (!up.enabled && !down.enabled) return incomplete('neither run-up nor coast-down is taken in')
+  return evaluation?.runUp ? DONE : incomplete('waits for the machine, its mounts and what excites it')
 }
 
 function absorberState(

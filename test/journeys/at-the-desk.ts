@@ -47,7 +47,7 @@ export async function backToShelf(page: Page): Promise<void> {
 
 export async function goTo(
   page: Page,
-  step: 'Machine' | 'Mounts' | 'Response' | 'Absorber' | 'Report',
+  step: 'Machine' | 'Mounts' | 'Response' | 'Run-up' | 'Absorber' | 'Report',
 ): Promise<void> {
   await page
     .getByRole('navigation', { name: 'Path of the job' })

@@ -17,7 +17,7 @@ afterAll(async () => {
   await run.remove()
 })
 
-const STEPS = ['Machine', 'Mounts', 'Response', 'Absorber', 'Report'] as const
+const STEPS = ['Machine', 'Mounts', 'Response', 'Run-up', 'Absorber', 'Report'] as const
 
 /** Serious and critical findings of the accessibility rules (WCAG 2.1 A and AA, contrast included). */
 async function findings(page: Page): Promise<string[]> {

@@ -1,6 +1,7 @@
+import type { Project } from '../../project/project.ts'
 import type { Caution, ReportSection } from '../report.ts'
 
-const CAUTIONS: readonly Caution[] = [
+const BEFORE: readonly Caution[] = [
   {
     heading: 'Rotating parts',
     text: 'Before anyone touches the machine, its mounts or an absorber: stop it, lock the drive out, tag it, and wait until it stands still. Guards go back on before it runs.',
@@ -21,10 +22,9 @@ const CAUTIONS: readonly Caution[] = [
     heading: 'Wind and earthquake',
     text: 'Restraint against wind, earthquake and tipping is a matter of the local code and of a licensed engineer. Nothing here replaces either.',
   },
-  {
-    heading: 'Run-up and coast-down',
-    text: 'Curves against speed are steady: each speed is held until the motion has settled. What a machine does while it passes a resonance is not computed here.',
-  },
+]
+
+const AFTER: readonly Caution[] = [
   {
     heading: 'Limits of the model',
     text: 'The machine is one rigid body with small motions on a rigid support, mounts are linear about their static position and the same for every frequency and temperature, and all inputs are taken as exact. Check the first machine by measurement before others are built alike.',
@@ -35,7 +35,9 @@ const CAUTIONS: readonly Caution[] = [
   },
 ]
 
-export function cautionSection(): ReportSection {
+/** @param project which says whether run-up and coast-down were looked at */
+export function cautionSection(project: Project): ReportSection {
+  const passing = { heading: 'Run-up and coast-down', text: passingWords(project) }
   return {
     id: 'cautions',
     heading: 'Cautions',
@@ -44,9 +46,20 @@ export function cautionSection(): ReportSection {
         kind: 'paragraph',
         text: 'This calculation supports the judgement of a competent engineer; it does not replace it, nor the local codes.',
       },
-      { kind: 'cautions', items: CAUTIONS },
+      { kind: 'cautions', items: [...BEFORE, passing, ...AFTER] },
     ],
   }
+}
+
+function passingWords({ runUp }: Project): string {
+  const steady = 'Curves against speed are steady: each speed is held until the motion has settled.'
+  const sides = [runUp.up.enabled && 'run-up', runUp.down.enabled && 'coast-down'].filter(
+    (side) => side !== false,
+  )
+  if (!runUp.enabled || sides.length === 0) {
+    return `${steady} What this machine does while it passes a resonance was not asked for and is not computed here.`
+  }
+  return `${steady} What the machine does in passing a resonance is computed for the given ${sides.join(' and ')} alone. A slower passage gives higher peaks; a drive with little torque to spare may hang at a resonance instead of passing it, for the motion is not taken to hold the shaft back. A rotor turns on after the switch: guards stay closed until it stands.`
 }
 
 export function checksumSection(checksum: string): ReportSection {

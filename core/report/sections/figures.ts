@@ -8,6 +8,7 @@ import { operatingRange } from '../../verdict/span.ts'
 import { nameOf, tuningWords } from '../names.ts'
 import type { Figure, FigureLimit, FigureMark, FigureSeries, ReportSection } from '../report.ts'
 import { NOISE, type Writer } from '../writer.ts'
+import { runUpFigures } from './figures-run-up.ts'
 
 /** More points than this would make a book: those with a requirement come first. */
 const MOST_POINTS = 6
@@ -17,6 +18,7 @@ export function figureSection(project: Project, evaluation: Evaluation, writer: 
   const { response } = evaluation
   const figures = [
     ...(response ? responseFigures(project, evaluation, response, writer) : []),
+    ...runUpFigures(project, evaluation, writer),
     ...evaluation.absorbers.flatMap((result) => absorberFigure(project, result)),
   ]
   return {

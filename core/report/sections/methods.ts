@@ -21,6 +21,7 @@ export function methodSection(project: Project): ReportSection {
           ...networkNotes(project),
           ...excitationNotes(project),
           ...responseNotes(project),
+          ...runUpNotes(project),
           ...absorberNotes(project),
           ...severityNotes(project),
           {
@@ -131,6 +132,29 @@ function responseNotes(project: Project): readonly MethodNote[] {
           {
             what: 'Overall velocity',
             how: 'Root of the sum of squares over the orders of the RMS velocity in one direction.',
+            source: MECHANICS,
+          },
+        ]
+      : []),
+  ]
+}
+
+function runUpNotes(project: Project): readonly MethodNote[] {
+  const { enabled, up, down } = project.runUp
+  const laws = [up, down].flatMap((pass) => (enabled && pass.enabled ? [pass.law.by] : []))
+  if (laws.length === 0) return []
+  return [
+    {
+      what: 'Run-up and coast-down',
+      how: 'The damped modes are taken exactly through the given course of speed, the phase of each force being its order times the shaft angle, unbalance with its tangential part; from rest where the first speed is zero, otherwise from the steady state there. Hysteretic damping enters by the damping ratio of each mode.',
+      source:
+        'F. M. Lewis, Vibration during acceleration through a critical speed, Trans. ASME 54, 1932 (the problem)',
+    },
+    ...(laws.includes('torque')
+      ? [
+          {
+            what: 'Speed under torque',
+            how: "Inertia times acceleration is the constant torque less a load torque that grows with the square of speed. The machine's motion does not react on the speed.",
             source: MECHANICS,
           },
         ]

@@ -117,7 +117,8 @@ describe.each(demos)('report of $name', ({ project }) => {
         expect(y.every((value) => value === null || Number.isFinite(value))).toBe(true)
       }
     }
-    expect(figures.flatMap((figure) => figure.limits).length).toBe(
+    const againstSpeed = figures.filter((figure) => !figure.id.startsWith('run-up'))
+    expect(againstSpeed.flatMap((figure) => figure.limits).length).toBe(
       project.requirements.filter((requirement) =>
         ['isolation', 'transmittedForce', 'vibrationVelocity'].includes(requirement.kind),
       ).length,

@@ -73,7 +73,7 @@ it('saves the report where the person wants it', async () => {
       item.setSavePath(path)
     })
   }, file)
-  await menu('step:5')
+  await menu('step:6')
   await desktop.page.getByRole('button', { name: 'Make the PDF' }).click()
   await expect.poll(() => existsSync(file), { timeout: 25_000 }).toBe(true)
   const bytes = readFileSync(file)

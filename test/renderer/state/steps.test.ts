@@ -38,6 +38,7 @@ describe('the path', () => {
       'empty',
       'empty',
       'empty',
+      'empty',
     ])
   })
 
@@ -69,6 +70,20 @@ describe('the path', () => {
     expect(path.report).toEqual({ state: 'incomplete', missing: 'no requirement to judge by' })
   })
 
+  it('says how far the run-up has come', () => {
+    const project = blankProject('x')
+    machine(project)
+    expect(states(project)['run-up']).toEqual({ state: 'empty', missing: 'not looked at' })
+    project.runUp.enabled = true
+    expect(states(project)['run-up'].missing).toContain('waits for the machine')
+    for (const x of [-0.5, 0, 0.5]) addMount(project, null, [x, x === 0 ? 0.3 : -0.3, 0])
+    expect(states(project)['run-up'].missing).toContain('Give the time of the run-up')
+    for (const pass of [project.runUp.up, project.runUp.down]) pass.law = { ...pass.law, time: 5 } as never
+    expect(states(project)['run-up']).toEqual({ state: 'done', missing: '' })
+    project.runUp.up.enabled = project.runUp.down.enabled = false
+    expect(states(project)['run-up'].state).toBe('incomplete')
+  })
+
   it('says when the mounts leave the machine free', () => {
     const project = blankProject('x')
     machine(project)
@@ -82,6 +97,7 @@ describe('addresses', () => {
 
   it('lead back to project and step, and anything else to the Shelf', () => {
     expect(readAddress(addressOf(id, 'mounts'))).toEqual({ id, step: 'mounts' })
+    expect(readAddress(addressOf(id, 'run-up'))).toEqual({ id, step: 'run-up' })
     expect(readAddress(`#/project/${id}`)).toEqual({ id, step: 'machine' })
     expect(readAddress(addressOf(null, 'mounts'))).toBeNull()
     expect(readAddress('#/project/../etc')).toBeNull()
@@ -90,6 +106,7 @@ describe('addresses', () => {
   it('know on which step a field is edited', () => {
     expect(stepOfField('mounting.placed[2].position')).toBe('mounts')
     expect(stepOfField('absorbers[0].host')).toBe('absorber')
+    expect(stepOfField('runUp.up.law.time')).toBe('run-up')
     expect(stepOfField('machine.massProperties.mass')).toBe('machine')
   })
 })
