@@ -16,10 +16,10 @@ export function problemsAt(
 
 function buildIndex(evaluation: Evaluation): ReadonlyMap<string, readonly Problem[]> {
   const index = new Map<string, Problem[]>()
-  for (const problem of evaluation.problems) {
-    const list = index.get(problem.field)
-    if (list) list.push(problem)
-    else index.set(problem.field, [problem])
+  // a designed mount type that stands under no mount yet has its remarks with the component alone
+  for (const problem of [...evaluation.problems, ...evaluation.components.flatMap((item) => item.problems)]) {
+    const list = index.get(problem.field) ?? []
+    if (!list.some(({ message }) => message === problem.message)) index.set(problem.field, [...list, problem])
   }
   indexes.set(evaluation, index)
   return index

@@ -1,4 +1,4 @@
-import type { MountType, PlacedMount } from '../../../core/project/mounts.ts'
+import type { Mounting, MountType, PlacedMount } from '../../../core/project/mounts.ts'
 import type { Project } from '../../../core/project/project.ts'
 import type { MountStatics } from '../../../core/results.ts'
 import type { UnitSystem } from '../../../core/units/dimensions.ts'
@@ -20,11 +20,15 @@ export function tiltChoice({ tilt }: PlacedMount): TiltChoice {
   return alone ? (AXES[index] ?? 'own') : 'own'
 }
 
-/** @param statics by mount id; missing while they are not known */
+/**
+ * @param statics by mount id; missing while they are not known
+ * @param setting how the machine is set: it decides whether packing is typed or read
+ */
 export function mountColumns(
   types: readonly MountType[],
   statics: ReadonlyMap<string, MountStatics>,
   units: UnitSystem,
+  setting: Mounting['setting'],
 ): Column<PlacedMount>[] {
   return [
     {
@@ -103,6 +107,7 @@ export function mountColumns(
         if (tilt && value !== null) tilt.angle = value
       },
     },
+    ...settingColumns(statics, units, setting),
     {
       kind: 'value',
       key: 'load',
@@ -135,6 +140,75 @@ export function mountColumns(
       dimension: 'deflection',
       text: (mount) => formatNumber(statics.get(mount.id)?.deflection, 'deflection', units, 3),
       refused: (mount) => (statics.get(mount.id)?.limitShare ?? 0) > 1,
+    },
+  ]
+}
+
+/** Packing as built, or what levelling aims at and asks for. */
+function settingColumns(
+  statics: ReadonlyMap<string, MountStatics>,
+  units: UnitSystem,
+  setting: Mounting['setting'],
+): Column<PlacedMount>[] {
+  if (setting.kind === 'asBuilt') {
+    return [
+      {
+        kind: 'quantity',
+        key: 'shim',
+        title: 'Packing',
+        hint: 'Packing under the mount',
+        dimension: 'deflection',
+        width: '4rem',
+        path: 'shim',
+        get: (mount) => mount.shim,
+        set: (draft, index, value) => {
+          const mount = mountOf(draft, index)
+          if (mount && value !== null) mount.shim = value
+        },
+      },
+    ]
+  }
+  return [
+    ...(setting.by === 'givenShares'
+      ? [
+          {
+            kind: 'quantity' as const,
+            key: 'wishedShare',
+            title: 'Share',
+            hint: 'Share of the weight aimed at',
+            group: 'Set level',
+            dimension: 'share' as const,
+            width: '4rem',
+            path: 'share',
+            optional: true,
+            placeholder: 'rest',
+            get: (mount: PlacedMount) => mount.share,
+            set: (draft: Project, index: number, value: number | null) => {
+              const mount = mountOf(draft, index)
+              if (mount) mount.share = value
+            },
+          },
+        ]
+      : []),
+    {
+      kind: 'value',
+      key: 'wished',
+      title: 'Aimed at',
+      hint: 'Load aimed at',
+      group: 'Set level',
+      numeric: true,
+      dimension: 'force',
+      text: (mount) => formatNumber(statics.get(mount.id)?.wishedLoad, 'force', units),
+    },
+    {
+      kind: 'value',
+      key: 'shim',
+      title: 'Packing',
+      hint: 'Packing that sets it level',
+      group: 'Set level',
+      numeric: true,
+      dimension: 'deflection',
+      text: (mount) => formatNumber(statics.get(mount.id)?.shim, 'deflection', units, 3),
     },
   ]
 }
