@@ -37,6 +37,24 @@ describe('floor curves', () => {
     )
   })
 
+  it('join where their pieces meet', () => {
+    for (const { id } of floorCurves) {
+      for (const corner of [2, 4, 8]) {
+        const [below, above] = [floorLimit(id, corner * (1 - 1e-9)), floorLimit(id, corner * (1 + 1e-9))]
+        if (below !== null && above !== null)
+          expect(above / below - 1, `${id} at ${corner} Hz`).toBeCloseTo(0, 7)
+      }
+    }
+  })
+
+  it('go straight between 2 and 8 Hz for any posture', () => {
+    // SOURCE ISO 2631-2:1989, combined curve at 4 Hz and 5 Hz: 4.07e-3 and 4.30e-3 m/s², from memory, to its digits
+    const acceleration = (frequency: number) =>
+      2 * Math.PI * frequency * (floorLimit('iso2631-combined', frequency) ?? 0)
+    expect(acceleration(4)).toBeCloseTo(4.07e-3, 5)
+    expect(acceleration(5)).toBeCloseTo(4.3e-3, 5)
+  })
+
   it('stand above one another in the order of their list', () => {
     const generic = floorCurves.filter(({ id }) => !id.startsWith('iso'))
     const limits = generic.map(({ id }) => floorLimit(id, 16) ?? 0)
