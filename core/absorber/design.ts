@@ -6,7 +6,7 @@ import { fixedPointTuning } from './fixed-points.ts'
 import { hostOf, type Host } from './host.ts'
 import { kindOf, travelShape, unboundedAt, type Kind, type Shape } from './kinds.ts'
 import { barePeak, worstPeak, type Peak } from './peaks.ts'
-import { invalid } from './problems.ts'
+import { caution, invalid } from './problems.ts'
 import { shapeMagnitude, type HostAndAbsorber } from './response.ts'
 import type { Receptance } from './receptance-panels.ts'
 import { splitFrequencyRatios } from './running-speed.ts'
@@ -30,6 +30,8 @@ export interface AbsorberContext {
   readonly runningSpeed: number | null
   /** [m/s²]; standard gravity when left out */
   readonly gravity?: number
+  /** of the machine that carries it [kg]; null or left out: not known */
+  readonly machineMass?: number | null
 }
 
 export interface AbsorberDesign {
@@ -54,10 +56,28 @@ export function designAbsorber(absorber: Absorber, index: number, context: Absor
   const { tuning, problems } = tune(absorber, host, field, receptance, context.runningSpeed)
   if (tuning === null) return { result: null, problems }
   const result = describe(absorber, host, tuning, context.gravity ?? STANDARD_GRAVITY)
-  if (allFinite(result)) return { result, problems }
+  if (allFinite(result))
+    return { result, problems: [...problems, ...tooHeavy(absorber, result, field, context)] }
   const message =
     'These numbers are too far apart to be computed with: check masses, frequencies and damping.'
   return { result: null, problems: [...problems, invalid(`${field}.tuning.by`, message)] }
+}
+
+/** Share of the machine's mass from which an absorber is hardly one any more: common practice, no source. */
+const HEAVY_SHARE = 0.25
+
+/** A mode that hardly moves at the attachment is a heavy host there, and a share of that is a heavy absorber. */
+function tooHeavy(
+  { host, size }: Absorber,
+  { mass }: AbsorberResult,
+  field: string,
+  { machineMass }: AbsorberContext,
+): readonly Problem[] {
+  if (host.kind !== 'mode' || machineMass === null || machineMass === undefined) return []
+  const share = mass / machineMass
+  if (!(share > HEAVY_SHARE)) return []
+  const message = `This absorber weighs ${Number((100 * share).toPrecision(3))} % of the machine. Where the mode hardly moves an absorber must be heavy: choose a point and direction that move more, or less mass.`
+  return [caution(`${field}.size.${size.by === 'mass' ? 'mass' : 'ratio'}`, message)]
 }
 
 /** On the full network for a mode; of the single freedom itself for a typed host. */
