@@ -11,6 +11,9 @@ const DURING: Readonly<Record<During, string>> = {
   down: 'during coast-down',
 }
 
+/** Mounts that move alike by symmetry differ by rounding alone: the first of them is named. */
+const ALIKE = 1e-9
+
 interface Candidate {
   readonly peak: RunUpPeak
   readonly place: string
@@ -90,7 +93,7 @@ function worstOf(
       return problem ? `Not known yet: ${problem.message}` : `The ${words} is left out: switch it on.`
     }
     for (const { peak, place } of candidates(pass)) {
-      if (worst !== null && peak.value <= worst.value) continue
+      if (worst !== null && peak.value <= worst.value * (1 + ALIKE)) continue
       worst = { value: peak.value, speed: peak.speed, place: `${place}, ${words}` }
     }
   }

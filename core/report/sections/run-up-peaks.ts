@@ -19,6 +19,9 @@ export interface PeakGroup {
   readonly rows: readonly PeakRow[]
 }
 
+/** Mounts that move alike by symmetry differ by rounding alone: the first of them is named. */
+const ALIKE = 1e-9
+
 /** The largest peak of a group and where it stands. */
 export interface Governing {
   readonly row: PeakRow
@@ -88,7 +91,7 @@ export function governingOf(group: PeakGroup): Governing | null {
   for (const row of group.rows) {
     for (const direction of ['up', 'down'] as const) {
       const peak = row[direction]
-      if (peak && peak.value > (worst?.peak.value ?? 0)) worst = { row, direction, peak }
+      if (peak && peak.value > (worst?.peak.value ?? 0) * (1 + ALIKE)) worst = { row, direction, peak }
     }
   }
   return worst
