@@ -4,6 +4,7 @@ import { describeSource } from './excitation/describe.ts'
 import { groupByOrder, type SourceLoad } from './excitation/order-loads.ts'
 import { knownLoads, ordersOf } from './excitation/project-loads.ts'
 import type { Observed } from './excitation/observed.ts'
+import { crestSpeeds, mergedSweeps } from './excitation/crests.ts'
 import { sweepResponse } from './excitation/sweep.ts'
 import { install, type Installation } from './mounts/installation.ts'
 import { MACHINE } from './mounts/machine-network.ts'
@@ -24,6 +25,7 @@ import type {
   ResponseResult,
   RunUpResult,
   SpeedResponse,
+  Sweep,
 } from './results.ts'
 import { judge } from './verdict/judge.ts'
 import type { Computed } from './verdict/verdict.ts'
@@ -146,6 +148,7 @@ function designAbsorbers(
             ),
     runningSpeed: project.machine.duty.runningSpeed,
     gravity: project.analysis.gravity,
+    machineMass: summary?.mass ?? null,
   }
   return project.absorbers.flatMap((absorber, index) => {
     const design = designAbsorber(absorber, index, context)
@@ -169,16 +172,35 @@ function respondTo(
   if (range === null) return null
   const orders = groupByOrder(loads)
   const speeds = speedsWithin(project, scope.span, sweepSpeeds(range, modes, scope.sweepPoints))
+  const sweep = sweepWithCrests(observed, orders, speeds)
   const { runningSpeed } = project.machine.duty
   const without = full === null || !scope.whole ? null : (bare?.observed ?? null)
   const runningWithout =
     without === null || runningSpeed === null ? null : responseAtSpeeds(without, orders, [runningSpeed])[0]
   return {
     atSpeeds: reportedSpeeds(project, observed, orders, scope, problems),
-    sweep: sweepResponse(observed, orders, speeds),
-    sweepWithoutAbsorbers: without === null ? null : sweepResponse(without, orders, speeds),
+    sweep,
+    sweepWithoutAbsorbers: without === null ? null : sweepResponse(without, orders, sweep.speed),
     runningWithoutAbsorbers: runningWithout && isBounded(runningWithout) ? runningWithout : null,
   }
+}
+
+/** Rounds of moving onto the crests of the curves: after these a sharp crest is exact to 1e-4. */
+const CREST_ROUNDS = 2
+
+/** The curves, with the speeds at which they have their crests, so that a judged peak is the peak. */
+function sweepWithCrests(
+  observed: Observed,
+  orders: ReturnType<typeof groupByOrder>,
+  speeds: Float64Array,
+): Sweep {
+  let sweep = sweepResponse(observed, orders, speeds)
+  for (let round = 0; round < CREST_ROUNDS; round++) {
+    const crests = crestSpeeds(sweep)
+    if (crests.length === 0) break
+    sweep = mergedSweeps(sweep, sweepResponse(observed, orders, crests))
+  }
+  return sweep
 }
 
 /** Run-up and coast-down where they are switched on; in a trial only as far as requirements judge them. */
