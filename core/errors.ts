@@ -20,6 +20,8 @@ export class InputError extends Error {
 
 function describeValue(value: unknown): string {
   if (value === null || value === undefined || value === '') return 'nothing'
+  if (Array.isArray(value)) return 'a list'
+  if (typeof value === 'object') return 'an object'
   const text = typeof value === 'string' ? JSON.stringify(value) : String(value)
   return text.length > 60 ? `${text.slice(0, 57)}...` : text
 }

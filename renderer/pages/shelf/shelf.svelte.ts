@@ -7,6 +7,7 @@ import { DeskError, desk } from '../../state/desk.svelte.ts'
 import { notices } from '../../state/notices.svelte.ts'
 import { downloadProject } from '../../state/project-file.ts'
 import { route } from '../../state/route.svelte.ts'
+import { importRefusal } from './import-words.ts'
 import { sortRows, tagsOf, type ShelfOrder } from './shelf-order.ts'
 
 /** What lies on the Shelf, as searched, sorted and filtered. */
@@ -164,8 +165,7 @@ export class Shelf {
       const row = await this.#ask('shelf:import', { text })
       if (row) notices.say(`“${row.name || 'Untitled'}” is on the Shelf.`)
     } catch (error) {
-      const reason = error instanceof Error ? error.message : String(error)
-      notices.problem(`${file.name} was not taken. ${reason}`)
+      notices.problem(`${file.name} was not taken. ${importRefusal(error)}`)
     }
   }
 
