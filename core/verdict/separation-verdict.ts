@@ -1,7 +1,7 @@
 import type { Project } from '../project/project.ts'
 import type { Mode, Verdict } from '../results.ts'
 import { formatPlain } from '../units/format.ts'
-import type { Of } from './names.ts'
+import { absorbersInPlace, type Of } from './names.ts'
 import { spanSpeeds, SPAN_WORDS } from './span.ts'
 import { reasonFor, unknownVerdict, verdictOf, type Computed } from './verdict.ts'
 
@@ -24,12 +24,12 @@ export function judgeModeSeparation(
   computed: Computed,
 ): Verdict {
   const subject = {
-    title: `Natural frequencies clear of order ${requirement.orders.map((order) => formatPlain(order)).join(', ')}, ${SPAN_WORDS[requirement.speeds]}`,
+    title: `Natural frequencies clear of ${orderWords(requirement.orders)} ${SPAN_WORDS[requirement.speeds]}`,
     dimension: 'share',
     keep: 'above',
     limit: requirement.limit,
   } as const
-  const modes = computed.modesWithAbsorbers ?? computed.modes
+  const modes = absorbersInPlace(project, computed).length > 0 ? computed.modesWithAbsorbers : computed.modes
   if (modes === null)
     return unknownVerdict(requirement, subject, reasonFor(computed, 'The modes are not known.'))
   const span = spanSpeeds(project, requirement.speeds, computed.response?.sweep.speed ?? new Float64Array())
@@ -41,6 +41,13 @@ export function judgeModeSeparation(
     speed: closest.speed,
     place: `mode ${closest.mode.number} (${closest.mode.name}, ${formatPlain(closest.mode.frequency)} Hz) and order ${formatPlain(closest.order)}`,
   })
+}
+
+/** Such as `order 1` or `orders 1, 2 and 9`. */
+function orderWords(orders: readonly number[]): string {
+  const words = orders.map((order) => formatPlain(order))
+  if (words.length < 2) return `order ${words[0] ?? '–'}`
+  return `orders ${words.slice(0, -1).join(', ')} and ${words.at(-1)}`
 }
 
 /** @param span lowest and highest speed [rad/s] */

@@ -63,7 +63,7 @@ function subject(requirement: Requirement, project: Project, writer: Writer): st
     }
     case 'modeSeparation': {
       const orders = requirement.orders.map((order) => writer.number(order, 'ratio')).join(', ')
-      return `natural frequencies clear of order ${orders}`
+      return `natural frequencies clear of ${requirement.orders.length > 1 ? 'orders' : 'order'} ${orders}`
     }
     case 'mountLoad':
       return 'static load of the mounts as a share of the rated load'

@@ -130,6 +130,11 @@ describe('a verdict', () => {
     expect(apart.value).toBeCloseTo((25 - highest) / 25, 9)
     const meeting = only([{ kind: 'modeSeparation', id: 'r', limit: 0.2, speeds: 'chart' }])
     expect([meeting.value, meeting.status]).toEqual([0, 'fail'])
+    const several = only([{ kind: 'modeSeparation', id: 'r', limit: 0.2, orders: [1, 2, 9] }])
+    expect([meeting.title, several.title]).toEqual([
+      expect.stringMatching(/^Natural frequencies clear of order 1 /),
+      'Natural frequencies clear of orders 1, 2 and 9 at running speed',
+    ])
   })
 
   it('holds a point to the limit of a severity zone and says where the table comes from', () => {
