@@ -34,6 +34,9 @@ export interface Bounds {
   readonly max: Vec3
 }
 
+/** From where to where along an axis [m]. */
+export type Span = readonly [number, number]
+
 /** What a drawing of the machine shows, in machine axes [m]. */
 export interface Scene {
   readonly solids: readonly Solid[]
@@ -44,7 +47,10 @@ export interface Scene {
   readonly mounts: readonly Mark[]
   readonly pushes: readonly Push[]
   readonly absorbers: readonly (Mark & { readonly direction: Vec3 })[]
+  /** what the sheet leaves room for */
   readonly bounds: Bounds
+  /** what is really there along each axis, to be dimensioned; null where nothing has a size yet */
+  readonly spans: readonly [Span | null, Span | null, Span | null]
 }
 
 /** Nothing is drawn smaller than this, so that a single point does not fill the sheet [m]. */
@@ -72,7 +78,7 @@ export function buildScene(project: Project, evaluation: Evaluation | null): Sce
     pushes: pushesOf(project),
     absorbers: absorbersOf(project),
   }
-  return { ...bare, bounds: boundsOf(bare) }
+  return { ...bare, ...boundsOf(bare) }
 }
 
 function partSolids(properties: Extract<MassProperties, { from: 'parts' }>): Solid[] {
@@ -134,7 +140,7 @@ function unit(vector: Readonly<Vec3>): Vec3 {
   return [vector[0] / length, vector[1] / length, vector[2] / length]
 }
 
-function boundsOf(scene: Omit<Scene, 'bounds'>): Bounds {
+function boundsOf(scene: Omit<Scene, 'bounds' | 'spans'>): Pick<Scene, 'bounds' | 'spans'> {
   const corners: Vec3[] = scene.solids.flatMap(({ centre, size }) => [
     [centre[0] - size[0] / 2, centre[1] - size[1] / 2, centre[2] - size[2] / 2] as Vec3,
     [centre[0] + size[0] / 2, centre[1] + size[1] / 2, centre[2] + size[2] / 2] as Vec3,
@@ -144,14 +150,16 @@ function boundsOf(scene: Omit<Scene, 'bounds'>): Bounds {
   if (scene.centreOfGravity) all.push(scene.centreOfGravity)
   const min: Vec3 = [Infinity, Infinity, Infinity]
   const max: Vec3 = [-Infinity, -Infinity, -Infinity]
+  const spans: [Span | null, Span | null, Span | null] = [null, null, null]
   for (const axis of [0, 1, 2] as const) {
     min[axis] = Math.min(...all.map((point) => point[axis]))
     max[axis] = Math.max(...all.map((point) => point[axis]))
+    if (max[axis] > min[axis]) spans[axis] = [min[axis], max[axis]]
     const lacking = SMALLEST - (max[axis] - min[axis])
     if (lacking > 0) {
       min[axis] -= lacking / 2
       max[axis] += lacking / 2
     }
   }
-  return { min, max }
+  return { bounds: { min, max }, spans }
 }

@@ -67,6 +67,13 @@ describe('the scene', () => {
     for (const axis of [0, 1, 2] as const) expect(bounds.max[axis]).toBeGreaterThan(bounds.min[axis])
   })
 
+  it('gives no dimension that nobody gave', () => {
+    const project = blankProject()
+    expect(buildScene(project, null).spans).toEqual([null, null, null])
+    project.machine.points.push({ id: 'a', name: 'Bearing', position: [0.2, 0, 0] })
+    expect(buildScene(project, null).spans).toEqual([[0, 0.2], null, null])
+  })
+
   it('draws typed inertia as the uniform box that has it', () => {
     const project = blankProject()
     // m (b² + c²) / 12 of a box 1.2 x 0.8 x 0.6 m of 600 kg: 50, 90, 104 kg m²
