@@ -15,6 +15,7 @@ import { mountScheduleSection } from './sections/mount-schedule.ts'
 import { modeBlocks } from './sections/results-modes.ts'
 import { responseBlocks } from './sections/results-response.ts'
 import { runUpBlocks } from './sections/results-run-up.ts'
+import { mountResults } from './sections/results-mounts.ts'
 import { massBlocks, problemBlocks, staticBlocks } from './sections/results-static.ts'
 import { verdictSection } from './sections/verdicts.ts'
 import { writerFor } from './writer.ts'
@@ -52,6 +53,7 @@ export function buildReport(project: Project, evaluation: Evaluation, options: R
       ...massBlocks(evaluation, writer),
       { kind: 'heading', text: 'At rest' },
       ...staticBlocks(project, evaluation, writer),
+      ...mountResults(project, evaluation, writer),
       { kind: 'heading', text: 'Natural modes' },
       ...modeBlocks(evaluation, writer),
       { kind: 'heading', text: 'Response' },

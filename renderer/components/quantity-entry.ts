@@ -1,5 +1,6 @@
 import { InputError } from '../../core/errors.ts'
-import type { Dimension, UnitSystem } from '../../core/units/dimensions.ts'
+import { DIMENSIONS, type Dimension, type UnitSystem } from '../../core/units/dimensions.ts'
+import { editableNumber, unitLabel } from '../../core/units/format.ts'
 import { factorOf, parseQuantity } from '../../core/units/parse.ts'
 
 export type Entry = { readonly value: number | null } | { readonly message: string }
@@ -18,10 +19,26 @@ export function readEntry(text: string, dimension: Dimension, units: UnitSystem,
   }
 }
 
-/** What a refused value should have been, as a sentence for under its field. @throws anything unexpected */
-export function refusal(error: unknown): string {
+/**
+ * What a refused value should have been, as a sentence for under its field.
+ * @param dimension of the field; with `units` the limits of the schema are said in the project's units
+ * @throws anything unexpected
+ */
+export function refusal(error: unknown, dimension?: Dimension, units?: UnitSystem): string {
   if (!(error instanceof InputError)) throw error
-  return `${error.allowed.charAt(0).toUpperCase()}${error.allowed.slice(1)}.`
+  const words =
+    dimension === undefined || units === undefined ? error.allowed : inUnits(error.allowed, dimension, units)
+  return `${words.charAt(0).toUpperCase()}${words.slice(1)}.`
+}
+
+const LIMIT = /^(must be greater than|must not be less than|must not be beyond) (-?[\d.e+-]+)(?: (.+))?$/
+
+/** A limit of the schema, which stands in the base unit of its dimension, in the units of the reader. */
+function inUnits(words: string, dimension: Dimension, units: UnitSystem): string {
+  const [, must, limit, unit = ''] = LIMIT.exec(words) ?? []
+  if (must === undefined || unit !== DIMENSIONS[dimension].baseLabel) return words
+  const label = unitLabel(dimension, units)
+  return `${must} ${editableNumber(Number(limit), dimension, units)}${label === '' ? '' : ` ${label}`}`
 }
 
 /** Steps of the arrow keys in display units where the size of the number is a poor guide. */

@@ -20,14 +20,14 @@ const BEFORE: readonly Caution[] = [
   },
   {
     heading: 'Wind and earthquake',
-    text: 'Restraint against wind, earthquake and tipping is a matter of the local code and of a licensed engineer. Nothing here replaces either.',
+    text: 'Restraint against wind, earthquake and tipping is a matter of the local code and of a licensed engineer. Nothing here replaces either, least of all a static load sideways, which knows neither impact nor stops.',
   },
 ]
 
 const AFTER: readonly Caution[] = [
   {
     heading: 'Limits of the model',
-    text: 'The machine is one rigid body with small motions on a rigid support, mounts are linear about their static position and the same for every frequency and temperature, and all inputs are taken as exact. Check the first machine by measurement before others are built alike.',
+    text: 'The machine is one rigid body with small motions on a rigid support, mounts vibrate linearly about their static position, each with the tangent of its law there, and the same for every frequency and amplitude; temperature counts only where a factor is given for it; all inputs are taken as exact. Check the first machine by measurement before others are built alike.',
   },
   {
     heading: 'Figures from memory',

@@ -5,6 +5,7 @@ import { nameOf, tuningWords, typeOf } from '../names.ts'
 import { column, textColumn, writeTable, type Cell } from '../raw-table.ts'
 import type { Block } from '../report.ts'
 import { NOT_KNOWN_WORDS, type Writer } from '../writer.ts'
+import { lawInputs, lawWords, settingFacts } from './inputs-mount-laws.ts'
 
 /** Mount types and places, support, absorbers and analysis settings, as they were put in. */
 export function mountingInputs(project: Project, writer: Writer): readonly Block[] {
@@ -12,11 +13,13 @@ export function mountingInputs(project: Project, writer: Writer): readonly Block
   return [
     { kind: 'heading', text: 'Mounting' },
     ...typeBlocks(project, writer),
+    ...lawInputs(project, writer),
     ...placeBlocks(project, writer),
     {
       kind: 'facts',
       rows: [
         { label: 'Support', value: 'rigid' },
+        ...settingFacts(project, writer),
         {
           label: 'Overturning effect of the weight',
           value: analysis.gravityStiffness ? 'included' : 'left out',
@@ -58,18 +61,22 @@ function typeBlocks(project: Project, writer: Writer): readonly Block[] {
     caption: 'Types of mount: limits and notes',
     columns: [
       textColumn('Type'),
+      textColumn('Described by'),
       column('Rated load', 'force'),
       column('Least load', 'force'),
       column('Deflection limit', 'deflection'),
+      column('Snubber gap', 'deflection'),
       column('Height', 'length'),
       column('Price', 'ratio'),
       textColumn('Note'),
     ],
     rows: types.map((type): readonly Cell[] => [
       nameOf(type),
+      lawWords(type),
       type.ratedLoad,
       type.leastLoad,
       type.deflectionLimit,
+      type.snubberGap,
       type.height,
       type.price,
       type.note,

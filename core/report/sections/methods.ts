@@ -1,6 +1,7 @@
 import { severityScales } from '../../criteria/severity.ts'
 import type { Project } from '../../project/project.ts'
 import type { MethodNote, ReportSection } from '../report.ts'
+import { mountNotes } from './methods-mounts.ts'
 
 const MECHANICS = ''
 
@@ -19,6 +20,7 @@ export function methodSection(project: Project): ReportSection {
         items: [
           ...massNotes(project),
           ...networkNotes(project),
+          ...mountNotes(project),
           ...excitationNotes(project),
           ...responseNotes(project),
           ...runUpNotes(project),

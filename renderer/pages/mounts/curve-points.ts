@@ -2,7 +2,7 @@ import { curveLaw } from '../../../core/mounts/axial-law.ts'
 import type { MountType } from '../../../core/project/mounts.ts'
 import type { Project } from '../../../core/project/project.ts'
 import type { MountStatics } from '../../../core/results.ts'
-import type { ChartSeries } from '../../charts/chart-types.ts'
+import type { ChartMark, ChartSeries } from '../../charts/chart-types.ts'
 import type { Column } from '../../components/table-columns.ts'
 
 /** A point of a measured curve, as a row of a table. */
@@ -18,6 +18,8 @@ type Points = Extract<MountType['law'], { kind: 'curve' }>['points']
 
 /** Points along the drawn curve. */
 const SAMPLES = 80
+/** Closest that two labels may stand, over the width of the chart. */
+const TOLD_APART = 0.12
 
 export function curveRows(points: Points): readonly CurveRow[] {
   return points.map(([deflection, load], index) => ({ id: String(index), deflection, load }))
@@ -59,39 +61,56 @@ export function curveColumns(type: number): Column<CurveRow>[] {
   ]
 }
 
-/** The curve as it is computed with, its points, and where the mounts stand on it. */
+/** The curve as it is computed with and its points, as far as the mounts stand on it. */
 export function curveSeries(points: Points, working: readonly MountStatics[]): ChartSeries[] {
   const law = curveLaw(points, 1)
-  const stands = working.map(({ deflection }) => deflection)
-  const measured = points.map(([deflection]) => deflection)
-  const from = Math.min(0, ...measured, ...stands)
-  const to = Math.max(...measured, ...stands)
+  const [from, to] = span(points, working)
   const x = Float64Array.from({ length: SAMPLES + 1 }, (_, step) => from + ((to - from) * step) / SAMPLES)
-  const onCurve = (at: Float64Array) => Float64Array.from(at, (deflection) => law.at(deflection).force)
-  const rising = Float64Array.from(stands).sort()
   return [
-    { id: 'curve', label: 'computed with', x, y: onCurve(x), role: 'main', dash: 0 },
+    {
+      id: 'curve',
+      label: 'computed with',
+      x,
+      y: Float64Array.from(x, (deflection) => law.at(deflection).force),
+      role: 'main',
+      dash: 0,
+    },
     {
       id: 'points',
       label: 'points given',
-      x: Float64Array.from(measured),
+      x: Float64Array.from(points, ([deflection]) => deflection),
       y: Float64Array.from(points, ([, load]) => load),
       role: 'points',
       dash: 1,
     },
-    ...(rising.length === 0
-      ? []
-      : [
-          {
-            id: 'mounts',
-            label: 'mounts at rest',
-            x: rising,
-            y: onCurve(rising),
-            role: 'points' as const,
-            dash: 2,
-          },
-        ]),
   ]
+}
+
+/** Marks where the mounts stand on the curve; those too close to be told apart share one. */
+export function workingMarks(
+  points: Points,
+  working: readonly MountStatics[],
+  names: ReadonlyMap<string, string>,
+): ChartMark[] {
+  const [from, to] = span(points, working)
+  const groups: { readonly at: number; readonly names: string[] }[] = []
+  for (const { id, deflection } of working.toSorted((a, b) => a.deflection - b.deflection)) {
+    const name = names.get(id) ?? id
+    const last = groups.at(-1)
+    if (last && deflection - last.at < TOLD_APART * (to - from)) last.names.push(name)
+    else groups.push({ at: deflection, names: [name] })
+  }
+  return groups.map(({ at, names: own }) => ({
+    id: own.join(),
+    x: at,
+    label: own.length > 3 ? `${own.length} mounts` : own.join(', '),
+    role: 'crossing',
+  }))
+}
+
+function span(points: Points, working: readonly MountStatics[]): readonly [from: number, to: number] {
+  const at = [...points.map(([deflection]) => deflection), ...working.map(({ deflection }) => deflection)]
+  return [Math.min(0, ...at), Math.max(...at)]
 }
 
 function tidy(value: number): number {

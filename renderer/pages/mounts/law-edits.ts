@@ -29,7 +29,10 @@ export function chooseLaw(
 ): void {
   if (choice === lawOf(type)) return
   const { type: present, usable } = effectiveMountType(type, conditions)
-  if (usable) type.stiffness = [...present.stiffness]
+  if (usable && lawOf(type) !== 'linear') {
+    const [x, y, z] = present.stiffness
+    type.stiffness = [tidy(x), tidy(y), tidy(z)]
+  }
   type.design = null
   switch (choice) {
     case 'linear':
@@ -57,18 +60,24 @@ export function newDesign(component: ComponentDesign['component'], load: number 
   return componentDesignSchema.parse({ component, load: load === null ? null : tidy(load) })
 }
 
-/**
- * Static load for which a type is to be designed: the largest on its mounts, else an even share of
- * the weight [N]; null while neither is known.
- */
-export function designLoad(project: Project, evaluation: Evaluation | null, type: string): number | null {
+/** A static load on one mount of a type, and how it is known. */
+export interface TypeLoad {
+  /** [N] */
+  readonly load: number
+  /** at rest: the largest on its mounts; even: an even share of the weight, where no rest is known */
+  readonly from: 'rest' | 'even'
+}
+
+/** Static load for which a type is to be designed; null while nothing is known of it. */
+export function loadOf(project: Project, evaluation: Evaluation | null, type: string): TypeLoad | null {
   const { placed } = project.mounting
   const own = new Set(placed.flatMap((mount) => (mount.type === type ? [mount.id] : [])))
   const loads = evaluation?.statics?.mounts.flatMap(({ id, load }) => (own.has(id) ? [load] : [])) ?? []
   const largest = Math.max(0, ...loads)
-  if (largest > 0) return largest
+  if (largest > 0) return { load: largest, from: 'rest' }
   const mass = evaluation?.massSummary?.mass ?? null
-  return mass === null || placed.length === 0 ? null : (mass * project.analysis.gravity) / placed.length
+  if (mass === null || placed.length === 0) return null
+  return { load: (mass * project.analysis.gravity) / placed.length, from: 'even' }
 }
 
 /** To four digits: a figure to begin with, that a person can read. */

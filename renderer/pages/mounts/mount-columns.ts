@@ -192,16 +192,6 @@ function settingColumns(
       : []),
     {
       kind: 'value',
-      key: 'wished',
-      title: 'Aimed at',
-      hint: 'Load aimed at',
-      group: 'Set level',
-      numeric: true,
-      dimension: 'force',
-      text: (mount) => formatNumber(statics.get(mount.id)?.wishedLoad, 'force', units),
-    },
-    {
-      kind: 'value',
       key: 'shim',
       title: 'Packing',
       hint: 'Packing that sets it level',

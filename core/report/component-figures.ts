@@ -1,11 +1,11 @@
-import type { PadFigures } from '../../../core/components/rubber-pad.ts'
-import type { SpringFigures } from '../../../core/components/spring-analysis.ts'
-import type { AirFigures } from '../../../core/components/air-spring.ts'
-import type { ComponentFigures } from '../../../core/components/analyse.ts'
-import { assertNever } from '../../../core/errors.ts'
-import type { ComponentDesign } from '../../../core/project/component-designs.ts'
-import type { Dimension, UnitSystem } from '../../../core/units/dimensions.ts'
-import { formatQuantity } from '../../../core/units/format.ts'
+import type { PadFigures } from '../components/rubber-pad.ts'
+import type { SpringFigures } from '../components/spring-analysis.ts'
+import type { AirFigures } from '../components/air-spring.ts'
+import type { ComponentFigures } from '../components/analyse.ts'
+import { assertNever } from '../errors.ts'
+import type { ComponentDesign } from '../project/component-designs.ts'
+import type { Dimension, UnitSystem } from '../units/dimensions.ts'
+import { formatQuantity } from '../units/format.ts'
 
 /** One computed figure of a component, as it is read. */
 export interface FigureLine {
