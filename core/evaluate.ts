@@ -78,6 +78,7 @@ function compute(project: Project, scope: Scope): Computed {
     summary === null || placed.length === 0 || bare === null || bare.modes === null
       ? null
       : install(project, summary, placed, orders)
+  problems.push(...unsaid(full?.problems ?? [], problems))
   const loads = knownLoads(project, summary?.centreOfGravity ?? [0, 0, 0], problems)
   const response = respondTo(project, loads, bare, full, scope, problems)
   const runUp = runUpIn(project, loads, (full ?? bare)?.observed ?? null, scope, problems)
@@ -93,6 +94,13 @@ function compute(project: Project, scope: Scope): Computed {
     runUp,
     absorbers,
   }
+}
+
+/** What the absorbers' weight and springs bring that the machine alone does not have. */
+function unsaid(found: readonly Problem[], known: readonly Problem[]): readonly Problem[] {
+  return found.filter(
+    ({ field, message }) => !known.some((problem) => problem.field === field && problem.message === message),
+  )
 }
 
 function dutyProblems(project: Project): readonly Problem[] {

@@ -8,6 +8,7 @@ import {
   judgeTransmittedForce,
   judgeVelocity,
 } from './response-verdicts.ts'
+import { absentAbsorber } from './names.ts'
 import { judgeRunUpForce, judgeRunUpMotion } from './run-up-verdicts.ts'
 import { judgeModeSeparation } from './separation-verdict.ts'
 import { judgeMountDeflection, judgeMountLoad } from './static-verdicts.ts'
@@ -18,9 +19,29 @@ import type { Computed } from './verdict.ts'
  * `unknown`, with the reason; it never counts as met.
  */
 export function judge(project: Project, computed: Computed): readonly Verdict[] {
+  const absent = absentAbsorber(project, computed)
   return project.requirements
     .filter((requirement) => requirement.enabled)
-    .map((requirement) => judgeOne(requirement, project, computed))
+    .map((requirement) => {
+      const verdict = judgeOne(requirement, project, computed)
+      return absent === null ? verdict : withoutAbsorber(verdict, absent)
+    })
+}
+
+const STATIC = new Set<Requirement['kind']>(['mountLoad', 'mountDeflection'])
+
+/** What was computed is the machine without an absorber that belongs to it: only what its weight cannot cure stands. */
+function withoutAbsorber(verdict: Verdict, reason: string): Verdict {
+  if (verdict.status === 'unknown' || (verdict.status === 'fail' && STATIC.has(verdict.kind))) return verdict
+  return {
+    ...verdict,
+    status: 'unknown',
+    value: null,
+    margin: null,
+    governingSpeed: null,
+    governingPlace: '',
+    advice: reason,
+  }
 }
 
 function judgeOne(requirement: Requirement, project: Project, computed: Computed): Verdict {

@@ -2,12 +2,15 @@ import { severityLimit, severityScales } from '../criteria/severity.ts'
 import type { Project } from '../project/project.ts'
 import type { SpeedSpan } from '../project/requirements.ts'
 import type { Verdict } from '../results.ts'
-import { mountName, type Of } from './names.ts'
+import { absorbersInPlace, mountName, type Of } from './names.ts'
 import { highestWithin, spanSpeeds, SPAN_WORDS, type Extreme } from './span.ts'
+import { unboundedPeak } from './unbounded.ts'
 import { reasonFor, unknownVerdict, verdictOf, type Computed } from './verdict.ts'
 
 interface Placed extends Extreme {
   readonly place: string
+  /** why the true peak has no bound; null where the value is the peak */
+  readonly unbounded: string | null
 }
 
 /** Largest value over several curves within the span of a requirement, with the curve's name. */
@@ -21,12 +24,20 @@ function worstCurve(
   if (!sweep) return reasonFor(computed, 'The response is not known.')
   const speeds = spanSpeeds(project, span, sweep.speed)
   if (speeds === null) return 'Give the speed on the Machine page.'
+  const unbounded = unboundedPeak(
+    computed.modesWithAbsorbers ?? computed.modes ?? [],
+    sweep,
+    curves.map(([, curve]) => curve),
+    speeds,
+  )
   let worst: Placed | null = null
   for (const [place, curve] of curves) {
     const extreme = highestWithin(sweep.speed, curve, speeds)
-    if (extreme !== null && (worst === null || extreme.value > worst.value)) worst = { ...extreme, place }
+    if (extreme !== null && (worst === null || extreme.value > worst.value)) {
+      worst = { ...extreme, place, unbounded }
+    }
   }
-  return worst ?? 'The speeds asked for lie beyond the chart.'
+  return worst ?? unbounded ?? 'The speeds asked for lie beyond the chart.'
 }
 
 export function judgeIsolation(requirement: Of<'isolation'>, project: Project, computed: Computed): Verdict {
@@ -41,7 +52,7 @@ export function judgeIsolation(requirement: Of<'isolation'>, project: Project, c
     return unknownVerdict(requirement, subject, 'Nothing excites the machine: add an exciting force.')
   const worst = worstCurve(project, computed, requirement.speeds, ratio ? [['support', ratio]] : [])
   if (typeof worst === 'string') return unknownVerdict(requirement, subject, worst)
-  return verdictOf(requirement, subject, { value: 1 - worst.value, speed: worst.speed })
+  return verdictOf(requirement, subject, { ...worst, value: 1 - worst.value, place: '' })
 }
 
 export function judgeTransmittedForce(
@@ -66,8 +77,7 @@ export function judgeTransmittedForce(
   const worst = worstCurve(project, computed, requirement.speeds, curves)
   if (typeof worst === 'string') return unknownVerdict(requirement, subject, worst)
   return verdictOf(requirement, subject, {
-    value: worst.value,
-    speed: worst.speed,
+    ...worst,
     place: single ? worst.place : '',
   })
 }
@@ -139,10 +149,9 @@ export function judgeAbsorberStroke(
     )
     if (typeof worst === 'string') return unknownVerdict(requirement, subject, worst)
     const limit = requirement.limit ?? absorber.strokeLimit
-    const share = limit === null ? Infinity : worst.value / limit
-    const governingShare =
-      governing === null ? -1 : governing.limit === null ? Infinity : governing.worst.value / governing.limit
-    if (share > governingShare) governing = { worst, limit }
+    if (governing === null || urgency(worst, limit) > urgency(governing.worst, governing.limit)) {
+      governing = { worst, limit }
+    }
   }
   if (governing === null) {
     return unknownVerdict(requirement, subject, reasonFor(computed, 'No absorber stands on the machine.'))
@@ -150,13 +159,10 @@ export function judgeAbsorberStroke(
   return verdictOf(requirement, { ...subject, limit: governing.limit }, governing.worst)
 }
 
-/** The enabled absorbers that are part of the computed response, in its order. */
-function absorbersInPlace(project: Project, computed: Computed) {
-  const strokes = computed.response?.atSpeeds[0]?.orders[0]?.absorbers.map((absorber) => absorber.id)
-  const ids =
-    strokes ??
-    project.absorbers
-      .filter((absorber) => absorber.enabled && absorber.host.kind === 'mode')
-      .map((absorber) => absorber.id)
-  return ids.flatMap((id) => project.absorbers.find((absorber) => absorber.id === id) ?? [])
+/** Orders absorbers by what must be said first: one beyond its limit, one that is not known, the rest. */
+function urgency({ value, unbounded }: Placed, limit: number | null): number {
+  const notKnown = 1 + Number.EPSILON
+  if (limit === null) return notKnown
+  const share = value / limit
+  return unbounded === null ? share : Math.max(notKnown, share)
 }

@@ -24,20 +24,25 @@ interface Finding {
   readonly advice?: string
   /** something besides the figure makes it fail, as the advice says */
   readonly failsAnyway?: boolean
+  /** why the true value has no bound and the one given is only part of it */
+  readonly unbounded?: string | null
 }
 
 /** A verdict with a value. A missing limit leaves it unknown, with the value shown. */
 export function verdictOf(requirement: Requirement, subject: Subject, finding: Finding): Verdict {
   const { limit, keep } = subject
   const margin = limit === null ? null : marginOf(finding.value, limit, keep)
+  const status = statusOf(margin, finding.failsAnyway ?? false)
+  const unbounded = finding.unbounded ?? null
+  if (unbounded !== null && status !== 'fail') return unknownVerdict(requirement, subject, unbounded)
   return {
     ...frame(requirement, subject),
-    status: statusOf(margin, finding.failsAnyway ?? false),
+    status,
     value: finding.value,
     margin,
     governingSpeed: finding.speed ?? null,
     governingPlace: finding.place ?? '',
-    advice: finding.advice ?? (limit === null ? 'Give a limit to have this judged.' : ''),
+    advice: unbounded ?? finding.advice ?? (limit === null ? 'Give a limit to have this judged.' : ''),
   }
 }
 
