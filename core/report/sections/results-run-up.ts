@@ -4,7 +4,8 @@ import { column, textColumn, writeTable, type Cell } from '../raw-table.ts'
 import type { Block } from '../report.ts'
 import type { Writer } from '../writer.ts'
 import { PASS_NAMES } from './inputs-run-up.ts'
-import { governingOf, peakGroups, type PeakGroup } from './run-up-peaks.ts'
+import { peakGroups, type PeakGroup } from './run-up-peaks.ts'
+import { courseWords, runUpSummary } from './run-up-words.ts'
 
 const SIDES = ['up', 'down'] as const
 type Side = (typeof SIDES)[number]
@@ -23,9 +24,10 @@ export function runUpBlocks(project: Project, evaluation: Evaluation, writer: Wr
       kind: 'facts',
       rows: sides.flatMap((side) => {
         const pass = runUp[side]
-        return pass ? [{ label: PASS_NAMES[side], value: courseWords(pass, writer) }] : []
+        return pass ? [{ label: PASS_NAMES[side], value: passWords(pass, writer) }] : []
       }),
     },
+    ...runUpSummary(project, runUp, writer.system).map((text): Block => ({ kind: 'paragraph', text })),
     {
       kind: 'paragraph',
       text: 'Peaks are zero to peak of the resultant, the highest that any angle of the shaft at the start gives. "Of steady" is the share of the largest steady value over the same speeds; where a resonance has no damping there is none.',
@@ -34,16 +36,14 @@ export function runUpBlocks(project: Project, evaluation: Evaluation, writer: Wr
   ]
 }
 
-function courseWords(pass: RunUpPass, writer: Writer): string {
-  const hold = pass.hold > 0 ? `, then ${writer.quantity(pass.hold, 'time')} at that speed` : ''
+function passWords(pass: RunUpPass, writer: Writer): string {
   const found = pass.converged
     ? `peaks found to ${writer.quantity(pass.errorEstimate, 'share', 2)}`
     : 'not every peak could be searched to the last: one may be a little higher'
-  return `${writer.quantity(pass.from, 'shaftSpeed')} to ${writer.quantity(pass.to, 'shaftSpeed')} in ${writer.quantity(pass.duration, 'time')}${hold}; ${found}`
+  return `${courseWords(pass, writer.system)}; ${found}`
 }
 
 function groupBlocks(group: PeakGroup, sides: readonly Side[], writer: Writer): readonly Block[] {
-  const governing = governingOf(group)
   const table = {
     caption: `${group.title} in passing the resonances`,
     columns: [
@@ -54,7 +54,6 @@ function groupBlocks(group: PeakGroup, sides: readonly Side[], writer: Writer): 
         column('after', 'time'),
         column('of steady', 'share', 3),
       ]),
-      textColumn(''),
     ],
     rows: group.rows.map((row): readonly Cell[] => [
       row.place,
@@ -62,7 +61,6 @@ function groupBlocks(group: PeakGroup, sides: readonly Side[], writer: Writer): 
         const peak = row[side]
         return peak ? [peak.value, peak.speed, peak.time, peak.ratio] : [null, null, null, null]
       }),
-      governing?.row.id === row.id ? `largest, ${PASS_NAMES[governing.direction].toLowerCase()}` : '',
     ]),
   }
   return [writeTable(table, writer)]

@@ -5,8 +5,6 @@ export type Direction = 'up' | 'down'
 export type LawKind = RunUp['up']['law']['by']
 export type LawField = 'from' | 'to' | 'time' | 'torque' | 'inertia' | 'loadTorque' | 'loadSpeed'
 
-export const PASS_NAMES: Readonly<Record<Direction, string>> = { up: 'Run-up', down: 'Coast-down' }
-
 /** Changes one quantity of a law; one that the law does not have is refused when the project is read. */
 export function setLawField(draft: Project, direction: Direction, key: LawField, value: number | null): void {
   Object.assign(draft.runUp[direction].law, { [key]: value })

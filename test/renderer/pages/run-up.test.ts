@@ -4,7 +4,7 @@ import { readProject } from '../../../core/project/read.ts'
 import { governingOf, peakGroups } from '../../../core/report/sections/run-up-peaks.ts'
 import type { RunUpPass, RunUpPeak, RunUpPeaks, RunUpResult } from '../../../core/results.ts'
 import { addEntry, setLawField, switchLaw } from '../../../renderer/pages/run-up/law-edits.ts'
-import { courseWords, runUpSummary } from '../../../renderer/pages/run-up/run-up-words.ts'
+import { courseWords, runUpSummary } from '../../../core/report/sections/run-up-words.ts'
 import {
   clearanceLimits,
   speedAtTime,

@@ -1,9 +1,9 @@
-import type { Project } from '../../../core/project/project.ts'
-import type { RunUpPass, RunUpPeak, RunUpResult } from '../../../core/results.ts'
-import type { UnitSystem } from '../../../core/units/dimensions.ts'
-import { formatPlain, formatQuantity } from '../../../core/units/format.ts'
-import { PASS_NAMES } from './law-edits.ts'
-import { governingOf, peakGroups, type PeakGroup } from '../../../core/report/sections/run-up-peaks.ts'
+import type { Project } from '../../project/project.ts'
+import type { RunUpPass, RunUpPeak, RunUpResult } from '../../results.ts'
+import type { UnitSystem } from '../../units/dimensions.ts'
+import { formatPlain, formatQuantity } from '../../units/format.ts'
+import { PASS_NAMES } from './inputs-run-up.ts'
+import { governingOf, peakGroups, type PeakGroup } from './run-up-peaks.ts'
 
 /** What is said of each group; the whole support says little that its mounts do not. */
 const SAID: readonly (readonly [id: PeakGroup['id'], where: string, verb: string])[] = [
