@@ -26,6 +26,21 @@ describe('what is typed into a field', () => {
     expect(refusal(new InputError('mass', 0, 'must be greater than 0 kg'))).toBe('Must be greater than 0 kg.')
     expect(() => refusal(new TypeError('bug'))).toThrow(TypeError)
   })
+
+  it('is refused with limits in the units of the project', () => {
+    const heavy = new InputError('mass', 0, 'must be greater than 0 kg')
+    expect(refusal(heavy, 'mass', 'US')).toBe('Must be greater than 0 lb.')
+    // SOURCE 1 in = 25.4 mm exactly: 1 m is 39.3700787402 in
+    const thick = new InputError('shim', 2, 'must not be beyond 1 m')
+    expect(refusal(thick, 'deflection', 'US')).toBe('Must not be beyond 39.3700787402 in.')
+    expect(refusal(thick, 'deflection', 'SI')).toBe('Must not be beyond 1000 mm.')
+    expect(refusal(new InputError('x', 2, 'must not be beyond 0.9'), 'share', 'SI')).toBe(
+      'Must not be beyond 90 %.',
+    )
+    // said of another quantity than that of the field, or in other words: as it stands
+    expect(refusal(heavy, 'length', 'US')).toBe('Must be greater than 0 kg.')
+    expect(refusal(new InputError('x', 2, 'points must rise'), 'length', 'US')).toBe('Points must rise.')
+  })
 })
 
 describe('stepping', () => {
