@@ -35,22 +35,39 @@ export function addMount(draft: Project, evaluation: Evaluation | null, position
 
 /**
  * Gives these mounts a type of the catalogue; the project keeps its own copy of it. Trying one
- * item after the other leaves no heap behind: copies of other items that nothing uses any more go.
+ * item after the other leaves no heap behind: copies of other items that nothing uses any more go,
+ * and so does the guess that stood under the first mounts, where nobody has touched its figures.
  */
 export function takeFromCatalogue(
   draft: Project,
   item: MountType,
   ids: readonly string[],
   catalogue: readonly MountType[],
+  evaluation: Evaluation | null,
 ): void {
   const { mounting } = draft
+  const standing = new Set(mounting.placed.map((mount) => mount.type))
   const own = mounting.types.find((type) => sameFigures(type, item))
   const id = own?.id ?? freeId(item.id, mounting.types)
   if (!own) mounting.types.push({ ...structuredClone(item), id })
   for (const mount of mounting.placed) if (ids.includes(mount.id)) mount.type = id
   const used = new Set(mounting.placed.map((mount) => mount.type))
   mounting.types = mounting.types.filter(
-    (type) => type.id === id || used.has(type.id) || !catalogue.some((other) => sameFigures(other, type)),
+    (type) =>
+      type.id === id ||
+      used.has(type.id) ||
+      !(
+        catalogue.some((other) => sameFigures(other, type)) ||
+        (standing.has(type.id) && isFirstGuess(type, draft, evaluation))
+      ),
+  )
+}
+
+function isFirstGuess(type: MountType, draft: Project, evaluation: Evaluation | null): boolean {
+  const { placed } = draft.mounting
+  const mass = evaluation?.massSummary?.mass ?? null
+  return [4, placed.length].some((count) =>
+    sameFigures({ ...firstType([], mass, draft.machine.duty.runningSpeed, count), name: type.name }, type),
   )
 }
 

@@ -51,20 +51,28 @@ describe('mounts', () => {
     const [s1, s2] = catalogue
     if (!s1 || !s2) throw new Error('the two items above')
     const ids = [addMount(draft, null, [0, 0, 0]), addMount(draft, null, [1, 0, 0])]
-    takeFromCatalogue(draft, s1, ids, catalogue)
-    takeFromCatalogue(draft, s2, ids, catalogue)
+    for (const type of draft.mounting.types) type.stiffness = [4e5, 4e5, 5e5]
+    takeFromCatalogue(draft, s1, ids, catalogue, null)
+    takeFromCatalogue(draft, s2, ids, catalogue, null)
     // the type typed in by hand stays, the first item's copy goes
     expect(draft.mounting.types.map((type) => type.id)).toEqual(['type1', 's2'])
-    takeFromCatalogue(draft, s1, ['m1'], catalogue)
+    takeFromCatalogue(draft, s1, ['m1'], catalogue, null)
     expect(draft.mounting.placed.map((mount) => mount.type)).toEqual(['s1', 's2'])
     expect(() => readProject(draft)).not.toThrow()
+  })
+
+  it('leave no guess behind that nobody has touched', () => {
+    const draft = blankProject('x')
+    const ids = [addMount(draft, null, [0, 0, 0])]
+    takeFromCatalogue(draft, item('s1', 1000), ids, [], null)
+    expect(draft.mounting.types.map((type) => type.id)).toEqual(['s1'])
   })
 
   it('do not take over a type of the same id with other figures', () => {
     const draft = blankProject('x')
     const ids = [addMount(draft, null, [0, 0, 0])]
     draft.mounting.types.push({ ...item('s1', 1000), lossFactor: 0.3 })
-    takeFromCatalogue(draft, item('s1', 1000), ids, [])
+    takeFromCatalogue(draft, item('s1', 1000), ids, [], null)
     expect(draft.mounting.placed[0]?.type).not.toBe('s1')
     expect(draft.mounting.types.find((type) => type.id === 's1')?.lossFactor).toBe(0.3)
   })
