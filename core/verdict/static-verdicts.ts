@@ -1,3 +1,4 @@
+import { effectiveMountType } from '../mounts/mount-type.ts'
 import type { Project } from '../project/project.ts'
 import type { MountStatics, Verdict } from '../results.ts'
 import { mountName, type Of } from './names.ts'
@@ -71,7 +72,7 @@ export function judgeMountDeflection(
   if (worst === null || worst.limitShare === null) {
     return unknownVerdict(requirement, typed, 'Give a limit here, or a deflection limit to the mount type.')
   }
-  const own = { ...typed, limit: Math.abs(worst.deflection) / worst.limitShare }
+  const own = { ...typed, limit: ownLimit(project, worst.id) }
   if (limited.length < mounts.length && worst.limitShare <= 1) {
     return unknownVerdict(
       requirement,
@@ -83,6 +84,13 @@ export function judgeMountDeflection(
     value: Math.abs(worst.deflection),
     place: mountName(project, worst.id),
   })
+}
+
+/** Deflection that the type of a mount allows, typed or as its design says [m]. */
+function ownLimit(project: Project, id: string): number | null {
+  const placed = project.mounting.placed.find((mount) => mount.id === id)
+  const type = project.mounting.types.find((candidate) => candidate.id === placed?.type)
+  return type ? effectiveMountType(type, project.analysis).type.deflectionLimit : null
 }
 
 /** The member for which `size` is largest, or null of an empty list. */

@@ -148,3 +148,23 @@ describe('a machine that its absorber tips over', () => {
     expect(verdict?.advice).toContain('tip over')
   })
 })
+
+describe('mounts that carry their load at no deflection', () => {
+  it('are judged against the limit of their design', () => {
+    const standard = 9.80665
+    const air = {
+      design: {
+        component: 'airSpring' as const,
+        // a quarter of 400 kg on each of the four corners
+        load: 100 * standard,
+        effectiveArea: 0.005,
+        bellowsVolume: 0.001,
+        lateralStiffness: 1e5,
+        bumpTravel: 0.02,
+      },
+    }
+    const [verdict] = judged([{ kind: 'mountDeflection', id: 'r' }], { runningSpeed: 100 }, {}, { type: air })
+    expect(verdict).toMatchObject({ status: 'pass', value: 0, margin: 1 })
+    expect(verdict?.limit).toBeGreaterThan(0)
+  })
+})
