@@ -86,6 +86,14 @@ export function middle(project: Project, evaluation: Evaluation | null, lowest: 
   return [cg[0], cg[1], level]
 }
 
+/** The nearest place along x, in these steps, where no mount stands yet [m]. */
+export function freePlace(placed: readonly PlacedMount[], wanted: Readonly<Vec3>, step: number): Vec3 {
+  const place: Vec3 = [...wanted]
+  while (placed.some(({ position }) => Math.hypot(...position.map((p, i) => p - (place[i] ?? 0))) < step / 2))
+    place[0] += step
+  return place
+}
+
 /** Mounts named in a sentence: `M1, M2, M3`, or how many there are. */
 export function nameMounts(mounts: readonly PlacedMount[]): string {
   if (mounts.length === 0) return 'no mount'

@@ -8,7 +8,12 @@ import {
   filterCatalogue,
   heaveFrequency,
 } from '../../../renderer/pages/mounts/catalogue.ts'
-import { addMount, nameMounts, takeFromCatalogue } from '../../../renderer/pages/mounts/mount-edits.ts'
+import {
+  addMount,
+  freePlace,
+  nameMounts,
+  takeFromCatalogue,
+} from '../../../renderer/pages/mounts/mount-edits.ts'
 
 function item(id: string, rated: number | null, least: number | null = null): MountType {
   return {
@@ -75,6 +80,20 @@ describe('mounts', () => {
     takeFromCatalogue(draft, item('s1', 1000), ids, [], null)
     expect(draft.mounting.placed[0]?.type).not.toBe('s1')
     expect(draft.mounting.types.find((type) => type.id === 's1')?.lossFactor).toBe(0.3)
+  })
+
+  it('added one after the other do not stand in one another', () => {
+    const draft = blankProject('x')
+    const places = [1, 2, 3].map(() => {
+      const place = freePlace(draft.mounting.placed, [0, 0.5, 0], 0.1)
+      addMount(draft, null, place)
+      return place
+    })
+    expect(places).toEqual([
+      [0, 0.5, 0],
+      [0.1, 0.5, 0],
+      [0.2, 0.5, 0],
+    ])
   })
 
   it('are named in a sentence', () => {
