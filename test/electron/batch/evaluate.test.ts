@@ -84,6 +84,27 @@ describe('a project that can be computed', () => {
     expect(readFileSync(report).subarray(0, 5).toString()).toBe('%PDF-')
   })
 
+  it('prints the curves of run-up and coast-down as plain lists beside their peaks', () => {
+    const ramp = (time: number) => ({ law: { by: 'ramp', time }, hold: 1 })
+    const project = readProject({
+      ...sampleProject(),
+      runUp: { enabled: true, up: ramp(3), down: ramp(8) },
+    })
+    const { status, stdout } = run([fileOf(project)])
+    expect(status).toBe(0)
+    const { runUp } = JSON.parse(stdout) as Evaluation
+    for (const [pass, duration] of [
+      [runUp?.up, 3],
+      [runUp?.down, 8],
+    ] as const) {
+      expect(pass?.duration).toBeCloseTo(duration, 12)
+      expect(pass?.mounts).toHaveLength(4)
+      const { time, speed, displacement } = pass?.envelope ?? {}
+      expect([time, speed, displacement].every((list) => Array.isArray(list))).toBe(true)
+      expect(time?.length).toBe(displacement?.length)
+    }
+  })
+
   it('computes what was asked for: natural frequencies need no force and no speed', () => {
     const { machine, ...rest } = sampleProject()
     const { status, stdout } = run([fileOf({ ...rest, sources: [], machine: { ...machine, duty: {} } })])
