@@ -4,9 +4,13 @@ import type { Sweep } from '../results.ts'
 /** New speeds closer together than this share of the gap they stand in show the same crest. */
 const SAME_CREST = 0.02
 
+/** A crest whose 1 / value² would fall below this share of its neighbour's is a resonance without damping. */
+const NO_BOUND = 1e-4
+
 /**
  * Speeds at which the crests of curves stand between the speeds of a sweep: the top of the parabola
- * through 1 / value² at the highest of three neighbours, which a single resonance follows exactly.
+ * through 1 / value² at the highest of three neighbours, which a single resonance follows exactly. A
+ * resonance without damping has no crest.
  * @returns rising; none where every crest is on a speed of the sweep already
  */
 export function crestSpeeds({ speed, ...sweep }: Sweep): Float64Array {
@@ -43,7 +47,9 @@ function topBetween(speed: Float64Array, curve: Float64Array, i: number): number
   const inverse = (at: number) => (curve[i]! / curve[at]!) ** 2 - 1
   const [left, right] = [inverse(i - 1) / before, inverse(i + 1) / after]
   const bend = (right - left) / (after - before)
-  const away = -(left - bend * before) / (2 * bend)
+  const slope = left - bend * before
+  const away = -slope / (2 * bend)
+  if (1 - slope ** 2 / (4 * bend) < NO_BOUND) return null
   return away > before && away < after ? speed[i]! + away : null
 }
 

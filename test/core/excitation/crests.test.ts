@@ -23,6 +23,21 @@ describe('crests of a sweep', () => {
     expect(crest).toBeCloseTo(100.3, 9)
   })
 
+  it('leave a resonance without damping alone, whose curve has no top', () => {
+    const speed = Float64Array.of(99, 99.9, 100.2, 101)
+    const curve = speed.map((s) => 1 / Math.abs(1 - s / 100))
+    expect(
+      crestSpeeds({
+        speed,
+        forceRatio: null,
+        supportForce: curve,
+        mountForces: [],
+        pointVelocity: [],
+        strokes: [],
+      }),
+    ).toEqual(new Float64Array())
+  })
+
   it('make a judged peak the closed form of one freedom, where many orders leave each few speeds', () => {
     // heave alone: 400 kg on 4 x 3e5 N/m, eta 0.05; vertical force, transmissibility sqrt(1 + eta²) / eta at most
     const orders = [1, 1.05, 1.3, 1.7, 2, 2.4, 3, 3.5, 4, 4.5, 5]
