@@ -71,16 +71,27 @@ export function judgeRunUpForce(
   return verdictOf(requirement, subject, worst)
 }
 
+const NEITHER = 'Neither run-up nor coast-down is switched on.'
+
+interface Worst {
+  readonly value: number
+  readonly speed: number
+  readonly place: string
+  /** why it may be less than the true peak */
+  readonly unbounded?: string | null
+}
+
 /** The largest peak over the passages asked for, or why it is not known. */
 function worstOf(
   project: Project,
   computed: Computed,
   during: During,
   candidates: (pass: RunUpPass) => readonly Candidate[],
-): { readonly value: number; readonly speed: number; readonly place: string } | string {
+): Worst | string {
   if (!project.runUp.enabled) return 'Switch the run-up on and say how the shaft comes to speed.'
   if (computed.runUp === null) return reasonFor(computed, 'The run-up is not known.')
-  let worst: { value: number; speed: number; place: string } | null = null
+  let worst: Worst | null = null
+  let unbounded: string | null = null
   for (const [direction, words] of [
     ['up', 'run-up'],
     ['down', 'coast-down'],
@@ -92,10 +103,11 @@ function worstOf(
       const problem = computed.problems.find(({ field }) => field.startsWith(`runUp.${direction}`))
       return problem ? `Not known yet: ${problem.message}` : `The ${words} is left out: switch it on.`
     }
+    if (!pass.converged) unbounded = `Not every peak of the ${words} was found, so that the largest is not known.`
     for (const { peak, place } of candidates(pass)) {
       if (worst !== null && peak.value <= worst.value * (1 + ALIKE)) continue
       worst = { value: peak.value, speed: peak.speed, place: `${place}, ${words}` }
     }
   }
-  return worst ?? 'Neither run-up nor coast-down is switched on.'
+  return worst === null ? NEITHER : { ...worst, unbounded }
 }

@@ -24,7 +24,7 @@ interface Finding {
   readonly advice?: string
   /** something besides the figure makes it fail, as the advice says */
   readonly failsAnyway?: boolean
-  /** why the true value has no bound and the one given is only part of it */
+  /** why the true value may lie beyond the one given, or has no bound at all */
   readonly unbounded?: string | null
 }
 

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { evaluate } from '../../../core/evaluate.ts'
 import type { ProjectInput } from '../../../core/project/project.ts'
+import { judge } from '../../../core/verdict/judge.ts'
 import { CORNERS, sketchProject, type Sketch } from '../mounts/machine-project.ts'
 
 type Requirements = NonNullable<ProjectInput['requirements']>
@@ -166,5 +167,26 @@ describe('mounts that carry their load at no deflection', () => {
     const [verdict] = judged([{ kind: 'mountDeflection', id: 'r' }], { runningSpeed: 100 }, {}, { type: air })
     expect(verdict).toMatchObject({ status: 'pass', value: 0, margin: 1 })
     expect(verdict?.limit).toBeGreaterThan(0)
+  })
+})
+
+describe('a run-up whose peaks were not all found', () => {
+  it('meets no clearance, but fails one that is passed already', () => {
+    const status = (limit: number, converged: boolean) => {
+      const project = sketchProject({
+        places: CORNERS,
+        more: {
+          runUp: { enabled: true, up: { law: { by: 'ramp', time: 5 } }, down: { enabled: false } },
+          requirements: [{ kind: 'runUpForce', id: 'r', limit }],
+        },
+      })
+      const computed = evaluate(project)
+      const up = computed.runUp?.up
+      if (!up) throw new Error('no run-up')
+      return judge(project, { ...computed, runUp: { up: { ...up, converged }, down: null } })[0]?.status
+    }
+    expect(status(1e9, true)).toBe('pass')
+    expect(status(1e9, false)).toBe('unknown')
+    expect(status(1e-9, false)).toBe('fail')
   })
 })
