@@ -121,8 +121,11 @@ function airLines(figures: AirFigures, write: Write): readonly FigureLine[] {
     { label: 'Gauge pressure', text: write(figures.gaugePressure, 'pressure') },
     { label: 'Volume over effective area', text: write(figures.effectiveHeight, 'length') },
     ...figures.heightChange.map(({ loadShare, travel }) => ({
-      label: `Sinks at ${write(loadShare, 'share', 3)} of the load by`,
-      text: travel === null ? 'beyond what is followed' : write(travel, 'deflection', 3),
+      label: `At ${write(loadShare, 'share', 3)} of the load, not refilled`,
+      text:
+        travel === null
+          ? 'beyond what is followed'
+          : `${travel < 0 ? 'rises' : 'sinks'} by ${write(Math.abs(travel), 'deflection', 3)}`,
     })),
     { label: 'Load at the highest pressure', text: write(figures.ratedLoad, 'force') },
   ]

@@ -31,7 +31,7 @@ const AFTER: readonly Caution[] = [
   },
   {
     heading: 'Figures from memory',
-    text: 'Limits of severity scales marked "from memory" must be checked against the standard in force before a decision rests on them.',
+    text: 'Limits, formulas and tables marked "from memory" must be checked against the standard in force or the named book before a decision rests on them.',
   },
 ]
 

@@ -47,7 +47,7 @@ export function mountColumns(
       kind: 'choice',
       key: 'type',
       title: 'Type',
-      width: '6rem',
+      width: '5.25rem',
       path: 'type',
       options: types.map((type) => ({ value: type.id, label: type.name || type.id })),
       get: (mount) => mount.type,
@@ -62,7 +62,7 @@ export function mountColumns(
       title: axis,
       group: 'Position',
       dimension: 'length',
-      width: '3.75rem',
+      width: '3.25rem',
       path: `position[${position}]`,
       get: (mount) => mount.position[position] ?? 0,
       set: (draft, index, value) => {
@@ -75,7 +75,7 @@ export function mountColumns(
       key: 'tilt',
       title: 'about',
       hint: 'Tilted about',
-      width: '4.75rem',
+      width: '4.25rem',
       group: 'Tilt',
       path: 'tilt',
       options: [
@@ -133,7 +133,7 @@ export function mountColumns(
     {
       kind: 'value',
       key: 'deflection',
-      title: 'Deflection',
+      title: 'Sinks',
       hint: 'Static deflection',
       group: 'At rest',
       numeric: true,

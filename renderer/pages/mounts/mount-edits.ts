@@ -75,7 +75,8 @@ function freeId(wanted: string, types: readonly MountType[]): string {
   return types.some((type) => type.id === wanted) ? newId(`${wanted}-`, types) : wanted
 }
 
-function sameFigures(a: MountType, b: MountType): boolean {
+/** Whether two types are the same but for their identifiers. */
+export function sameFigures(a: MountType, b: MountType): boolean {
   return JSON.stringify({ ...a, id: '' }) === JSON.stringify({ ...b, id: '' })
 }
 
