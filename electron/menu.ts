@@ -52,7 +52,7 @@ export function menuTemplate(
       label: '&Project',
       submenu: [
         item('project:new', 'New Project', 'CmdOrCtrl+N'),
-        item('project:import', 'Bring In a Project File…', 'CmdOrCtrl+O'),
+        item('project:import', 'Import a Project File…', 'CmdOrCtrl+O'),
         item('shelf:show', 'Back to the Shelf', 'CmdOrCtrl+Shift+L'),
         line,
         item('project:rename', 'Rename', 'F2'),

@@ -12,6 +12,7 @@ describe('search anywhere', () => {
     expect(labels('run sp')).toEqual(['Running speed'])
     expect(labels('customary')).toEqual(['Show US units'])
     expect(labels('weight')).toContain('Mass')
+    expect(labels('unbalance')).toEqual(['What shakes it'])
   })
 
   it('finds nothing rather than something else', () => {
