@@ -1,5 +1,6 @@
 import type { Project } from '../../core/project/project.ts'
-import type { Evaluation, Problem } from '../../core/results.ts'
+import type { RequirementKind } from '../../core/project/requirements.ts'
+import type { Evaluation, Problem, Verdict } from '../../core/results.ts'
 import type { Step } from './route.svelte.ts'
 
 export interface StepState {
@@ -19,13 +20,14 @@ export function stepStates(
   const machine = machineState(project, problems)
   const mounts = mountsState(project, problems)
   const response = responseState(evaluation, machine, mounts)
+  const runUp = runUpState(project, evaluation, problems)
   return {
     machine,
     mounts,
     response,
-    'run-up': runUpState(project, evaluation, problems),
+    'run-up': runUp,
     absorber: absorberState(project, evaluation, problems),
-    report: reportState(project, evaluation, response),
+    report: reportState(project, evaluation, [response, runUp]),
   }
 }
 
@@ -46,8 +48,7 @@ function mountsState(project: Project, problems: readonly Problem[]): StepState 
 
 function responseState(evaluation: Evaluation | null, machine: StepState, mounts: StepState): StepState {
   if (evaluation?.response) {
-    const unknown = evaluation.verdicts.filter((verdict) => verdict.status === 'unknown').length
-    return unknown === 0 ? DONE : incomplete(count(unknown, 'requirement') + ' not yet known')
+    return unknownState(evaluation, (verdict) => !isOfRunUp(verdict))
   }
   const open = [machine.state !== 'done' && 'the machine', mounts.state !== 'done' && 'the mounts']
   const names = open.filter((name) => name !== false)
@@ -61,11 +62,24 @@ function runUpState(
   problems: readonly Problem[],
 ): StepState {
   const { enabled, up, down } = project.runUp
-  if (!enabled) return { state: 'empty', missing: 'not looked at' }
+  const asked = project.requirements.some((requirement) => requirement.enabled && isOfRunUp(requirement))
+  if (!enabled)
+    return asked ? incomplete('asked for, not yet looked at') : { state: 'empty', missing: 'not looked at' }
   const found = fromProblems(problems, ['runUp'])
   if (found.state !== 'done') return found
   if (!up.enabled && !down.enabled) return incomplete('neither run-up nor coast-down is taken in')
-  return evaluation?.runUp ? DONE : incomplete('waits for the machine, its mounts and what excites it')
+  return evaluation?.runUp
+    ? unknownState(evaluation, isOfRunUp)
+    : incomplete('waits for the machine, its mounts and what excites it')
+}
+
+function isOfRunUp({ kind }: { readonly kind: RequirementKind }): boolean {
+  return kind === 'runUpMotion' || kind === 'runUpForce'
+}
+
+function unknownState({ verdicts }: Evaluation, counted: (verdict: Verdict) => boolean): StepState {
+  const unknown = verdicts.filter((verdict) => verdict.status === 'unknown' && counted(verdict)).length
+  return unknown === 0 ? DONE : incomplete(count(unknown, 'requirement') + ' not yet known')
 }
 
 function absorberState(
@@ -81,11 +95,16 @@ function absorberState(
   return computed >= enabled ? DONE : incomplete('waits for its host')
 }
 
-function reportState(project: Project, evaluation: Evaluation | null, response: StepState): StepState {
+function reportState(
+  project: Project,
+  evaluation: Evaluation | null,
+  results: readonly StepState[],
+): StepState {
   if (!evaluation?.response) return { state: 'empty', missing: 'waits for results' }
   if (project.job.name.trim() === '') return incomplete('the project has no name')
   if (project.requirements.length === 0) return incomplete('no requirement to judge by')
-  return response.state === 'done' ? DONE : incomplete(response.missing)
+  // a run-up that nobody asked for is no gap
+  return results.find(({ state }) => state === 'incomplete') ?? DONE
 }
 
 function fromProblems(problems: readonly Problem[], roots: readonly string[]): StepState {

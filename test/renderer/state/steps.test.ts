@@ -80,6 +80,23 @@ describe('the path', () => {
     expect(states(project)['run-up'].missing).toContain('Give the time of the run-up')
     for (const pass of [project.runUp.up, project.runUp.down]) pass.law = { ...pass.law, time: 5 } as never
     expect(states(project)['run-up']).toEqual({ state: 'done', missing: '' })
+    project.runUp.enabled = false
+    const asked = {
+      kind: 'runUpForce',
+      id: 'r',
+      enabled: true,
+      source: '',
+      during: 'both',
+      limit: 1e6,
+    } as const
+    project.requirements.push(asked)
+    project.job.name = 'Fan'
+    const path = states(project)
+    expect(path.response.state).toBe('done')
+    expect(path['run-up']).toEqual({ state: 'incomplete', missing: 'asked for, not yet looked at' })
+    expect(path.report).toEqual(path['run-up'])
+    project.runUp.enabled = true
+    expect(states(project).report.state).toBe('done')
     project.runUp.up.enabled = project.runUp.down.enabled = false
     expect(states(project)['run-up'].state).toBe('incomplete')
   })
