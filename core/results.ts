@@ -126,7 +126,11 @@ export interface Statics {
   /** sum of the vertical mount loads [N] and its relative distance from the weight */
   readonly loadSum: number
   readonly loadSumError: number
-  /** point about which a vertical static force only sinks the machine (elastic centre) [m], or null */
+  /**
+   * point through which a vertical static force shifts the machine without turning it (elastic centre) [m], or
+   * null. Tilted mounts may ask for a twist about z besides, which no force through a point has: there it is
+   * the point of the central axis.
+   */
   readonly elasticCentre: Vec3 | null
   readonly setting: 'asBuilt' | 'levelled'
   /** steps that curved mounts took to their balance; 0 where every mount is linear */

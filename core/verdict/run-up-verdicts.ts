@@ -103,7 +103,8 @@ function worstOf(
       const problem = computed.problems.find(({ field }) => field.startsWith(`runUp.${direction}`))
       return problem ? `Not known yet: ${problem.message}` : `The ${words} is left out: switch it on.`
     }
-    if (!pass.converged) unbounded = `Not every peak of the ${words} was found, so that the largest is not known.`
+    if (!pass.converged)
+      unbounded = `Not every peak of the ${words} was found, so that the largest is not known.`
     for (const { peak, place } of candidates(pass)) {
       if (worst !== null && peak.value <= worst.value * (1 + ALIKE)) continue
       worst = { value: peak.value, speed: peak.speed, place: `${place}, ${words}` }
