@@ -21,11 +21,12 @@ export function limitWords(verdict: Verdict, units: UnitSystem): string {
   return verdict.keep === 'below' ? `at most ${limit}` : `at least ${limit}`
 }
 
-/** `12 % in hand`, `over by 8 %`. */
+/** `12 % in hand`, `over by 8 %`; a limit that is kept is no comfort where another one fails. */
 export function marginWords(verdict: Verdict): string {
   if (verdict.margin === null) return NOT_KNOWN
   const percent = formatPlain(Math.abs(verdict.margin) * 100, 3)
-  if (verdict.margin >= 0) return `${percent} % in hand`
+  if (verdict.margin >= 0)
+    return verdict.status === 'fail' ? 'kept, but another limit is not' : `${percent} % in hand`
   return verdict.keep === 'below' ? `over by ${percent} %` : `short by ${percent} %`
 }
 

@@ -66,7 +66,10 @@ function verdictRow(verdict: Verdict, writer: Writer): readonly Cell[] {
     verdict.title,
     writer.quantity(verdict.value, dimension),
     verdict.limit === null ? limit : `${keep === 'below' ? 'at most' : 'at least'} ${limit}`,
-    writer.quantity(verdict.margin, 'share', 3),
+    // a limit that is kept is no comfort where another one fails: the remark names that
+    verdict.status === 'fail' && (verdict.margin ?? 0) >= 0
+      ? 'see remark'
+      : writer.quantity(verdict.margin, 'share', 3),
     governing.join(', '),
     STATUS_WORDS[verdict.status],
   ]

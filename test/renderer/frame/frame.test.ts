@@ -110,7 +110,8 @@ describe('words of a verdict', () => {
   })
   it('say by how much it is short, or what is in hand', () => {
     expect(marginWords({ ...verdict, keep: 'above', margin: -0.1 })).toBe('short by 10 %')
-    expect(marginWords({ ...verdict, margin: 0.25 })).toBe('25 % in hand')
+    expect(marginWords({ ...verdict, status: 'pass', margin: 0.25 })).toBe('25 % in hand')
+    expect(marginWords({ ...verdict, margin: 0.25 })).toBe('kept, but another limit is not')
     expect(marginWords({ ...verdict, margin: null })).toBe('–')
   })
   it('do not invent a limit', () => {
