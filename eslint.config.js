@@ -15,6 +15,7 @@ const CORE_LAYERS = [
   'absorber',
   'criteria',
   'verdict',
+  'feasibility',
   'report',
 ]
 const OUTSIDE_CORE = {

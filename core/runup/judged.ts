@@ -2,6 +2,8 @@ import type { Project } from '../project/project.ts'
 import type { Requirement } from '../project/requirements.ts'
 import type { RunUpScope } from './run-up.ts'
 
+const DIRECTIONS = ['x', 'y', 'z', 'resultant'] as const
+
 type RunUpRequirement = Extract<Requirement, { kind: 'runUpMotion' | 'runUpForce' }>
 
 /** Trials and maps need no more digits than this: a share of the peak. */
@@ -26,5 +28,9 @@ export function judgedOf(project: Project): RunUpScope | null {
     up: judging.some(({ during }) => during !== 'down'),
     down: judging.some(({ during }) => during !== 'up'),
     tolerance: TRIAL_TOLERANCE,
+    worstOnly: true,
+    directions: DIRECTIONS.map((direction) =>
+      judging.some((one) => (one.kind === 'runUpMotion' ? one.direction : 'resultant') === direction),
+    ),
   }
 }

@@ -1,6 +1,6 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
 import type { Poles } from '../network/poles.ts'
-import { fillPanel, forcedModes, panelEnd, panelWork, TERMS, type Panel, type PanelWork } from './panel.ts'
+import { boundForced, fillPanel, forcedModes, panelEnd, panelWork, type PanelWork } from './panel.ts'
 import type { PanelPlan } from './panel-plan.ts'
 import type { StateLoad } from './state-load.ts'
 
@@ -30,7 +30,7 @@ export const stateAt = ({ plan, poles }: March, order: number, panel: number): n
 export function marchThrough(plan: PanelPlan, poles: Poles, loads: readonly StateLoad[]): March | null {
   const { count, modes } = poles
   const states = loads.length * (plan.count + 1) * count
-  const work = panelWork(poles)
+  const work = panelWork(poles, plan.degree)
   const march = {
     plan,
     poles,
@@ -53,10 +53,9 @@ export function marchThrough(plan: PanelPlan, poles: Poles, loads: readonly Stat
     for (let p = 0; p < plan.count; p++) {
       fillPanel(work, plan, p, poles, loads[o]!, march.stateRe, march.stateIm, stateAt(march, o, p))
       panelEnd(work.panel, march.stateRe, march.stateIm, stateAt(march, o, p + 1))
-      forcedModes(work, poles)
       const { panel } = work
       const at = o * plan.count + p
-      boundModes(panel, modes, plan.half[p]!, march.displacement, march.velocity, at * modes)
+      boundForced(work, poles, plan.half[p]!, march.displacement, march.velocity, at * modes)
       for (let j = 0; j < count; j++) {
         march.free[at * count + j] = Math.hypot(panel.freeRe[j]!, panel.freeIm[j]!)
       }
@@ -64,30 +63,6 @@ export function marchThrough(plan: PanelPlan, poles: Poles, loads: readonly Stat
     }
   }
   return march
-}
-
-/** No power series is larger than the sum of its coefficients on -1 to 1; velocity is P' / half + i rate P. */
-function boundModes(
-  { modesRe, modesIm, rate }: Panel,
-  modes: number,
-  half: number,
-  displacement: Float64Array,
-  velocity: Float64Array,
-  at: number,
-): void {
-  for (let r = 0; r < modes; r++) {
-    let size = 0
-    let slope = 0
-    for (let k = 0; k < TERMS; k++) {
-      const p = modesRe[r * TERMS + k]!
-      const q = modesIm[r * TERMS + k]!
-      const one = Math.sqrt(p * p + q * q)
-      size += one
-      slope += k * one
-    }
-    displacement[at + r] = size
-    velocity[at + r] = slope / half + Math.abs(rate[0]!) * size
-  }
 }
 
 /** Fills a panel's motion for an order once more. */

@@ -2,10 +2,10 @@
 import { refill, type March } from './march.ts'
 import { panelWork, TERMS, type PanelWork } from './panel.ts'
 
-/** Samples kept of one panel; further ones are computed each time they are asked for. */
-const CAPACITY = 400
-/** Free vibrations smaller than this share of all motion of the panel are left out. */
-const NEGLIGIBLE = 1e-13
+/** Samples kept of one panel, fine and quick; further ones are computed each time they are asked for. */
+const CAPACITY = { fine: 320, quick: 64 } as const
+/** Free vibrations smaller than this share of all motion of the panel are left out, fine and quick. */
+const NEGLIGIBLE = { fine: 1e-11, quick: 1e-6 } as const
 /** Curves kept of each mode, re and im: displacement, its first and second derivative by x, its forced part and that one's derivative. */
 const CURVES = 10
 /** Where the forced part stands among them. */
@@ -19,6 +19,7 @@ export interface Motion {
   readonly march: March
   readonly orders: number
   readonly modes: number
+  readonly accuracy: 'fine' | 'quick'
   /** whether velocities, and so second derivatives, are wanted */
   readonly velocity: boolean
   readonly panels: readonly PanelWork[]
@@ -41,13 +42,14 @@ export interface Motion {
   readonly freeFourth: Float64Array
 }
 
-/** Samples that every panel has: its begin and end; then the middle of the whole, and one that is not kept. */
+/** Samples that every panel has: its begin and end. The middle of the whole is a half of `WHOLE`. */
 export const BEGIN = 0
 export const END = 1
-export const MIDDLE = 2
-const SCRATCH = CAPACITY
+export const WHOLE = 2
+const FIRST_FREE = 3
 
-export function motionOf(march: March, velocity: boolean): Motion {
+export function motionOf(march: March, velocity: boolean, accuracy: 'fine' | 'quick' = 'fine'): Motion {
+  const capacity = CAPACITY[accuracy]
   const orders = march.loads.length
   const { modes, count } = march.poles
   const stride = CURVES * modes + count
@@ -56,12 +58,13 @@ export function motionOf(march: March, velocity: boolean): Motion {
     march,
     orders,
     modes,
+    accuracy,
     velocity,
-    panels: march.loads.map(() => panelWork(march.poles)),
-    data: make((CAPACITY + 1) * orders * stride),
+    panels: march.loads.map(() => panelWork(march.poles, march.plan.degree)),
+    data: make((capacity + 1) * orders * stride),
     stride,
-    left: new Int32Array(CAPACITY + 1),
-    right: new Int32Array(CAPACITY + 1),
+    left: new Int32Array(capacity),
+    right: new Int32Array(capacity),
     count: 0,
     half: 1,
     derivatives: make(4 * orders * modes),
@@ -72,7 +75,7 @@ export function motionOf(march: March, velocity: boolean): Motion {
   }
 }
 
-/** Takes a panel in hand, with samples at its begin, end and middle. */
+/** Takes a panel in hand, with samples at its begin and end. */
 export function enterPanel(motion: Motion, panel: number): void {
   const { march, orders, panels } = motion
   const { count } = march.poles
@@ -89,16 +92,14 @@ export function enterPanel(motion: Motion, panel: number): void {
     dropSmall(motion, o)
   }
   motion.half = march.plan.half[panel]!
-  motion.count = 3
+  motion.count = FIRST_FREE
   fillSample(motion, BEGIN, -1)
   fillSample(motion, END, 1)
-  fillSample(motion, MIDDLE, 0)
-  motion.left[MIDDLE] = -1
-  motion.right[MIDDLE] = -1
+  motion.left[WHOLE] = -1
 }
 
 /** Vibrations that are nothing beside the others and the forced motion are left out from here on. */
-function dropSmall({ panels, march, free, active, activeCount }: Motion, o: number): void {
+function dropSmall({ panels, march, free, active, activeCount, accuracy }: Motion, o: number): void {
   const { count } = march.poles
   const { panel } = panels[o]!
   let largest = 0
@@ -108,7 +109,7 @@ function dropSmall({ panels, march, free, active, activeCount }: Motion, o: numb
   }
   let kept = 0
   for (let j = 0; j < count; j++) {
-    if (free[o * count + j]! > NEGLIGIBLE * largest) active[o * count + kept++] = j
+    if (free[o * count + j]! > NEGLIGIBLE[accuracy] * largest) active[o * count + kept++] = j
   }
   activeCount[o] = kept
 }
@@ -144,9 +145,10 @@ function boundDerivatives(
 
 /** Middle of an interval's half: the sample, made when it is first asked for. */
 export function halfOf(motion: Motion, parent: number, side: 'left' | 'right', x: number): number {
-  const known = parent < SCRATCH ? motion[side][parent]! : -1
+  const capacity = motion.left.length
+  const known = parent < capacity ? motion[side][parent]! : -1
   if (known >= 0) return known
-  if (parent >= SCRATCH || motion.count >= CAPACITY) return sampleAt(motion, x)
+  if (parent >= capacity || motion.count >= capacity) return sampleAt(motion, x)
   const sample = motion.count++
   motion[side][parent] = sample
   motion.left[sample] = -1
@@ -157,8 +159,9 @@ export function halfOf(motion: Motion, parent: number, side: 'left' | 'right', x
 
 /** A sample anywhere, good until the next of its kind. */
 export function sampleAt(motion: Motion, x: number): number {
-  fillSample(motion, SCRATCH, x)
-  return SCRATCH
+  const scratch = motion.left.length
+  fillSample(motion, scratch, x)
+  return scratch
 }
 
 /** Where the curves of a sample and order begin: curve c of mode r at c modes + r, then the states' decay. */

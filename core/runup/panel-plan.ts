@@ -1,12 +1,13 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
 import { speedOf, type SpeedCourse, type SpeedPiece } from './speed-course.ts'
 
-/** Highest power in the series of speed, phase and force over a panel. */
-export const DEGREE = 20
+/** Highest power in the series of speed, phase and force over a panel: fine, and quick for trials. */
+export const DEGREE = { fine: 20, quick: 10 } as const
 
 /** Stretches of time over which the phase is a straight line and a small rest. */
 export interface PanelPlan {
   readonly course: SpeedCourse
+  readonly degree: number
   readonly count: number
   /** which piece of the course, and the panel's middle in it [s] */
   readonly piece: Int32Array
@@ -21,22 +22,25 @@ export interface PanelPlan {
   readonly complete: boolean
 }
 
-/** By how much the phase may bend over a panel [rad]: exp(i bend x²) is then cut at 3e-11. */
+/** By how much the phase may bend over a panel [rad]: exp(i bend x²) is then cut at 3e-11, quick at 6e-6. */
 const BEND = 0.4
-/** Last terms of the speed's own series against its first. */
-const SPEED_TAIL = 1e-10
+/** Largest last terms of the phase's own series [rad], fine and quick. */
+const PHASE_TAIL = { fine: 1e-10, quick: 1e-5 } as const
 const MOST_PANELS = 40_000
 
-/**
- * Cuts a course into panels. @param order the highest order that acts
- */
-export function planPanels(course: SpeedCourse, order: number): PanelPlan {
+/** Cuts a course into panels. @param order the highest order that acts */
+export function planPanels(
+  course: SpeedCourse,
+  order: number,
+  accuracy: 'fine' | 'quick' = 'fine',
+): PanelPlan {
+  const degree = DEGREE[accuracy]
   const piece: number[] = []
   const middle: number[] = []
   const half: number[] = []
   const time: number[] = []
   const angle: number[] = []
-  const series = new Float64Array(DEGREE + 1)
+  const series = new Float64Array(degree + 1)
   let begun = 0
   let turned = 0
   let complete = true
@@ -47,7 +51,7 @@ export function planPanels(course: SpeedCourse, order: number): PanelPlan {
       let length = Math.min(left, panelLength(part, at, order))
       // equal panels rather than a short one at the end
       length = left / Math.ceil(left / length - 1e-9)
-      while (!isSmooth(part, at + length / 2, length / 2, order, series)) length /= 2
+      while (!isSmooth(part, at + length / 2, length / 2, order, series, PHASE_TAIL[accuracy])) length /= 2
       piece.push(index)
       middle.push(at + length / 2)
       half.push(length / 2)
@@ -63,6 +67,7 @@ export function planPanels(course: SpeedCourse, order: number): PanelPlan {
   }
   return {
     course,
+    degree,
     count: piece.length,
     piece: Int32Array.from(piece),
     middle: Float64Array.from(middle),
@@ -77,7 +82,7 @@ export function planPanels(course: SpeedCourse, order: number): PanelPlan {
 function anglesAbout(series: Float64Array, half: number): readonly [number, number] {
   let before = 0
   let after = 0
-  for (let k = 0; k <= DEGREE; k++) {
+  for (let k = 0; k < series.length; k++) {
     const term = (half * series[k]!) / (k + 1)
     after += term
     before += k % 2 === 0 ? term : -term
@@ -98,13 +103,14 @@ function isSmooth(
   half: number,
   order: number,
   series: Float64Array,
+  leastTail: number,
 ): boolean {
   if (part.square === 0) return true
   speedSeries(part, middle, half, series)
   let bend = 0
-  for (let k = 1; k <= DEGREE; k++) bend += (order * half * Math.abs(series[k]!)) / (k + 1)
-  const tail = Math.abs(series[DEGREE]!) + Math.abs(series[DEGREE - 1]!)
-  return bend <= 1.2 * BEND && order * half * tail <= SPEED_TAIL
+  for (let k = 1; k < series.length; k++) bend += (order * half * Math.abs(series[k]!)) / (k + 1)
+  const tail = Math.abs(series.at(-1)!) + Math.abs(series.at(-2)!)
+  return bend <= 1.2 * BEND && order * half * tail <= leastTail
 }
 
 /**
@@ -119,7 +125,7 @@ export function speedSeries(part: SpeedPiece, middle: number, half: number, seri
     series[1] = half * constant
     return
   }
-  for (let k = 0; k < DEGREE; k++) {
+  for (let k = 0; k < series.length - 1; k++) {
     let product = 0
     for (let i = 0; i <= k; i++) product += series[i]! * series[k - i]!
     series[k + 1] = (half * ((k === 0 ? constant : 0) + square * product)) / (k + 1)

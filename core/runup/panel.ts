@@ -3,9 +3,10 @@ import type { Poles } from '../network/poles.ts'
 import { DEGREE, speedSeries, type PanelPlan } from './panel-plan.ts'
 import type { StateLoad } from './state-load.ts'
 
-/** Highest power of a state's own series; exp(3.5 x) is cut at 1e-14 there. */
-const STATE_DEGREE = 28
-export const TERMS = STATE_DEGREE + 1
+/** So many more powers has a state's own series than its force's; exp(3.5 x) is then cut at 1e-14, quick at 1e-6. */
+const MORE_POWERS = 8
+/** Room for every series. */
+export const TERMS = DEGREE.fine + MORE_POWERS + 1
 /** Below this |kappa| a state's series runs upwards from its middle, above it downwards from its end. */
 const SLOW = 3.5
 
@@ -44,11 +45,16 @@ export interface PanelWork {
   readonly speedSquared: Float64Array
   /** force per unit: constant, squared, inertial law */
   readonly series: readonly (readonly [Float64Array, Float64Array])[]
+  /** for bounds */
+  readonly headRe: Float64Array
+  readonly headIm: Float64Array
+  readonly tail: Float64Array
+  readonly tailSlope: Float64Array
 }
 
-export function panelWork({ count, modes }: Poles): PanelWork {
+export function panelWork({ count, modes }: Poles, degree: number): PanelWork {
   const make = (size: number) => new Float64Array(size)
-  const terms = () => make(DEGREE + 1)
+  const terms = () => make(degree + 1)
   return {
     panel: {
       count,
@@ -73,6 +79,10 @@ export function panelWork({ count, modes }: Poles): PanelWork {
       [terms(), terms()],
       [terms(), terms()],
     ],
+    headRe: make(HEAD),
+    headIm: make(HEAD),
+    tail: make(count),
+    tailSlope: make(count),
   }
 }
 
@@ -111,6 +121,7 @@ export function fillPanel(
 
 /** exp(i order rest), the same times w², and times w² - i w', as power series in x. */
 function forceSeries({ series, speed, speedSquared, panel }: PanelWork, order: number, half: number): void {
+  const degree = speed.length - 1
   const [[baseRe, baseIm], [squareRe, squareIm], [massRe, massIm]] = series as [
     [Float64Array, Float64Array],
     [Float64Array, Float64Array],
@@ -119,7 +130,7 @@ function forceSeries({ series, speed, speedSquared, panel }: PanelWork, order: n
   let begin = 0
   let end = 0
   let top = 1
-  for (let k = 1; k < DEGREE; k++) {
+  for (let k = 1; k < degree; k++) {
     // rest' = half (speed - speed at the middle)
     const term = (order * half * speed[k]!) / (k + 1)
     if (term !== 0) top = k
@@ -130,7 +141,7 @@ function forceSeries({ series, speed, speedSquared, panel }: PanelWork, order: n
   panel.phase[1] = end
   baseRe[0] = 1
   baseIm[0] = 0
-  for (let k = 1; k <= DEGREE; k++) {
+  for (let k = 1; k <= degree; k++) {
     let re = 0
     let im = 0
     // k E_k = i sum (m rest_m) E_(k-m), with m rest_m = order half speed_(m-1)
@@ -142,8 +153,8 @@ function forceSeries({ series, speed, speedSquared, panel }: PanelWork, order: n
     baseRe[k] = re / k
     baseIm[k] = im / k
   }
-  for (let m = 0; m <= DEGREE; m++) speedSquared[m] = m <= 2 * top ? coefficientOfSquare(speed, m) : 0
-  for (let k = 0; k <= DEGREE; k++) {
+  for (let m = 0; m <= degree; m++) speedSquared[m] = m <= 2 * top ? coefficientOfSquare(speed, m) : 0
+  for (let k = 0; k <= degree; k++) {
     let re = 0
     let im = 0
     let massR = 0
@@ -164,7 +175,7 @@ function forceSeries({ series, speed, speedSquared, panel }: PanelWork, order: n
     massIm[k] = im + massI
   }
   const last =
-    Math.hypot(baseRe[DEGREE]!, baseIm[DEGREE]!) + Math.hypot(baseRe[DEGREE - 1]!, baseIm[DEGREE - 1]!)
+    Math.hypot(baseRe[degree]!, baseIm[degree]!) + Math.hypot(baseRe[degree - 1]!, baseIm[degree - 1]!)
   panel.cut[0] = last
 }
 
@@ -176,6 +187,7 @@ function coefficientOfSquare(series: Float64Array, m: number): number {
 }
 
 function forcedMotion({ panel, series }: PanelWork, load: StateLoad, j: number, half: number): void {
+  const degree = series[0]![0].length - 1
   const { forcedRe: re, forcedIm: im } = panel
   const at = j * TERMS
   const a = load.constantRe[j]!
@@ -187,7 +199,7 @@ function forcedMotion({ panel, series }: PanelWork, load: StateLoad, j: number, 
   const [baseRe, baseIm] = series[0]!
   const [squareRe, squareIm] = series[1]!
   const [massRe, massIm] = series[2]!
-  for (let k = 0; k <= DEGREE; k++) {
+  for (let k = 0; k <= degree; k++) {
     re[at + k] =
       half *
       (a * baseRe[k]! -
@@ -208,36 +220,50 @@ function forcedMotion({ panel, series }: PanelWork, load: StateLoad, j: number, 
   const x = panel.kappaRe[j]!
   const y = panel.kappaIm[j]!
   const slow = x * x + y * y < SLOW * SLOW
-  panel.terms[j] = slow ? TERMS : DEGREE + 1
-  if (slow) seriesUp(re, im, at, x, y)
-  else seriesDown(re, im, at, x, y)
+  panel.terms[j] = degree + 1 + (slow ? MORE_POWERS : 0)
+  if (slow) seriesUp(re, im, at, x, y, degree)
+  else seriesDown(re, im, at, x, y, degree)
 }
 
 /** In place: (k + 1) P_(k+1) = kappa P_k + g_k from P_0 = 0. */
-function seriesUp(re: Float64Array, im: Float64Array, at: number, x: number, y: number): void {
+function seriesUp(
+  re: Float64Array,
+  im: Float64Array,
+  at: number,
+  x: number,
+  y: number,
+  degree: number,
+): void {
   let nextRe = re[at]!
   let nextIm = im[at]!
   re[at] = im[at] = 0
-  for (let k = 0; k < STATE_DEGREE; k++) {
+  for (let k = 0; k < degree + MORE_POWERS; k++) {
     const p = re[at + k]!
     const q = im[at + k]!
     const gRe = nextRe
     const gIm = nextIm
-    nextRe = k < DEGREE ? re[at + k + 1]! : 0
-    nextIm = k < DEGREE ? im[at + k + 1]! : 0
+    nextRe = k < degree ? re[at + k + 1]! : 0
+    nextIm = k < degree ? im[at + k + 1]! : 0
     re[at + k + 1] = (x * p - y * q + gRe) / (k + 1)
     im[at + k + 1] = (x * q + y * p + gIm) / (k + 1)
   }
 }
 
 /** In place: kappa P_k = (k + 1) P_(k+1) - g_k from the highest power down. */
-function seriesDown(re: Float64Array, im: Float64Array, at: number, x: number, y: number): void {
+function seriesDown(
+  re: Float64Array,
+  im: Float64Array,
+  at: number,
+  x: number,
+  y: number,
+  degree: number,
+): void {
   const size = x * x + y * y
   const p = x / size
   const q = -y / size
   let aboveRe = 0
   let aboveIm = 0
-  for (let k = DEGREE; k >= 0; k--) {
+  for (let k = degree; k >= 0; k--) {
     const a = (k + 1) * aboveRe - re[at + k]!
     const b = (k + 1) * aboveIm - im[at + k]!
     aboveRe = a * p - b * q
@@ -288,6 +314,64 @@ export function forcedModes({ panel }: PanelWork, poles: Poles): void {
     }
   }
   panel.top[0] = highestPower(modesRe, modesIm, poles.modes)
+}
+
+/** Powers of which the bound of a mode is taken together; of the higher ones, state by state. */
+const HEAD = 6
+
+/**
+ * Bounds of the modes' forced motion over the panel, without all their powers: no series is larger than
+ * the sum of its coefficients' sizes on -1 to 1. Velocity is P' / half + i rate P.
+ */
+export function boundForced(
+  { panel, headRe, headIm, tail, tailSlope }: PanelWork,
+  poles: Poles,
+  half: number,
+  displacement: Float64Array,
+  velocity: Float64Array,
+  at: number,
+): void {
+  const { forcedRe, forcedIm, terms } = panel
+  for (let j = 0; j < poles.count; j++) {
+    let sum = 0
+    let slope = 0
+    for (let k = HEAD; k < terms[j]!; k++) {
+      const p = forcedRe[j * TERMS + k]!
+      const q = forcedIm[j * TERMS + k]!
+      const size = Math.sqrt(p * p + q * q)
+      sum += size
+      slope += k * size
+    }
+    tail[j] = sum
+    tailSlope[j] = slope
+  }
+  for (let r = 0; r < poles.modes; r++) {
+    headRe.fill(0)
+    headIm.fill(0)
+    let size = 0
+    let slope = 0
+    for (let j = 0; j < poles.count; j++) {
+      const a = poles.shapeRe[r * poles.count + j]!
+      const b = poles.shapeIm[r * poles.count + j]!
+      if (a === 0 && b === 0) continue
+      for (let k = 0; k < HEAD; k++) {
+        const p = forcedRe[j * TERMS + k]!
+        const q = forcedIm[j * TERMS + k]!
+        headRe[k]! += a * p - b * q
+        headIm[k]! += a * q + b * p
+      }
+      const part = Math.sqrt(a * a + b * b)
+      size += part * tail[j]!
+      slope += part * tailSlope[j]!
+    }
+    for (let k = 0; k < HEAD; k++) {
+      const one = Math.sqrt(headRe[k]! * headRe[k]! + headIm[k]! * headIm[k]!)
+      size += one
+      slope += k * one
+    }
+    displacement[at + r] = size
+    velocity[at + r] = slope / half + Math.abs(panel.rate[0]!) * size
+  }
 }
 
 /** Powers smaller than this share of the largest of a series are rounding. */

@@ -2,7 +2,7 @@
 import { amplitudesOfStates, amplitudeWork, objectivesOf, type AmplitudeWork } from './amplitude.ts'
 import { crestHeight, crestPlace, crestWork, loadCubics, mayExceed, type CrestWork } from './crest.ts'
 import { stateAt, type March } from './march.ts'
-import { BEGIN, END, enterPanel, halfOf, MIDDLE, motionOf, sampleAt, type Motion } from './motion.ts'
+import { BEGIN, END, enterPanel, halfOf, motionOf, sampleAt, WHOLE, type Motion } from './motion.ts'
 import {
   emptySignal,
   fourthBound,
@@ -25,10 +25,9 @@ export interface Peaks {
 
 /** What a direction or resultant may still hide above the value found, as a share of it. */
 export const PEAK_TOLERANCE = 5e-5
+const ALL_WANTED = [true, true, true, true] as const
 /** An interval halved as often as this cannot be told from a point. */
 const DEEPEST = 40
-/** The whole panel is no half of anything. */
-const NONE = -1
 /** More intervals of one panel mean that its beats are not worth following. */
 const MOST_INTERVALS = 20_000
 
@@ -38,6 +37,9 @@ interface Search {
   readonly motion: Motion
   readonly crest: CrestWork
   readonly best: Peaks
+  /** the largest found of all rivals: below it nothing matters */
+  readonly floor: Float64Array
+  readonly wanted: readonly boolean[]
   /** quantities at both ends of the panel, then at the middle of each interval on the way down, then for one-off looks */
   readonly slots: Signal[]
   readonly spare: Signal
@@ -55,6 +57,18 @@ interface Search {
   panel: number
 }
 
+export interface PeakScope {
+  /** what a peak may hide, as a share of it; left out: 5e-5 */
+  readonly tolerance?: number
+  /**
+   * Quantities with the same number are rivals: only the largest of them is found, the others are what
+   * they happened to be when they could no longer win. Left out: every quantity stands by itself.
+   */
+  readonly rivals?: readonly number[]
+  /** of three directions and the resultant those that are wanted; left out: all */
+  readonly wanted?: readonly boolean[]
+}
+
 /**
  * Peaks of every watched quantity over the whole course. Panels whose bound lies below what has been
  * found are passed over; in the others intervals are halved until they cannot hold more, or a cubic
@@ -64,19 +78,25 @@ interface Search {
 export function findPeaks(
   march: March,
   watches: readonly Watch[],
-  tolerance = PEAK_TOLERANCE,
+  { tolerance = PEAK_TOLERANCE, rivals, wanted }: PeakScope = {},
 ): { readonly peaks: readonly Peaks[]; readonly complete: boolean } {
   const orders = march.loads.length
   const shared = {
     motion: motionOf(
       march,
       watches.some(({ moves }) => moves),
+      rivals ? 'quick' : 'fine',
     ),
     crest: crestWork(orders),
     slots: [emptySignal(orders), emptySignal(orders)],
     spare: emptySignal(orders),
   }
-  const searches = watches.map((watch) => newSearch(march, watch, shared, tolerance))
+  const floors = new Map<number, Float64Array>()
+  const searches = watches.map((watch, index) => {
+    const floor = floors.get(rivals?.[index] ?? -1 - index) ?? new Float64Array(4)
+    floors.set(rivals?.[index] ?? -1 - index, floor)
+    return newSearch(march, watch, { ...shared, floor, wanted: wanted ?? ALL_WANTED }, tolerance)
+  })
   const scratch = amplitudeWork()
   const first = new Set<number>()
   for (const search of searches) {
@@ -101,7 +121,7 @@ export function findPeaks(
 function newSearch(
   march: March,
   watch: Watch,
-  shared: Pick<Search, 'motion' | 'crest' | 'slots' | 'spare'>,
+  shared: Pick<Search, 'motion' | 'crest' | 'slots' | 'spare' | 'floor' | 'wanted'>,
   tolerance: number,
 ): Search {
   const objectives = objectivesOf(watch)
@@ -127,7 +147,7 @@ function newSearch(
 }
 
 /** A first idea of the peaks from the states that are known anyway. */
-function sampleBegins({ march, watch, best, spare }: Search, scratch: AmplitudeWork): void {
+function sampleBegins({ march, watch, best, floor, spare }: Search, scratch: AmplitudeWork): void {
   const { plan, poles, loads, stateRe, stateIm } = march
   const { value } = spare
   const apart = (plan.count + 1) * poles.count
@@ -138,6 +158,7 @@ function sampleBegins({ march, watch, best, spare }: Search, scratch: AmplitudeW
       if (value[q]! <= best.value[q]!) continue
       best.value[q] = value[q]!
       best.panel[q] = panel
+      floor[q] = Math.max(floor[q]!, value[q]!)
     }
   }
 }
@@ -146,10 +167,12 @@ const sizeOf = (watch: Watch, q: number): WatchSize =>
   q < watch.axes.length ? watch.axes[q]!.size : watch.all
 
 /** Marks what may exceed its best in a panel. @returns whether anything may */
-function panelMayExceed({ march, watch, best, tolerance, alive }: Search, panel: number): boolean {
+function panelMayExceed({ march, watch, floor, wanted, tolerance, alive }: Search, panel: number): boolean {
   let any = false
-  for (let q = 0; q < best.value.length; q++) {
-    const may = panelBound(march, sizeOf(watch, q), panel, watch.moves) > best.value[q]! * (1 + tolerance)
+  for (let q = 0; q < alive.length; q++) {
+    const may =
+      wanted[q] === true &&
+      panelBound(march, sizeOf(watch, q), panel, watch.moves) > floor[q]! * (1 + tolerance)
     alive[q] = may ? 1 : 0
     any ||= may
   }
@@ -182,7 +205,7 @@ function searchPanel(search: Search, panel: number): boolean {
   }
   read(search, -1, BEGIN, slots[0]!, 2)
   read(search, 1, END, slots[1]!, 2)
-  const complete = searchInterval(search, -1, slots[0]!, 1, slots[1]!, NONE, 'left', 0)
+  const complete = searchInterval(search, -1, slots[0]!, 1, slots[1]!, WHOLE, 'left', 0)
   for (let q = 0; q < improved.length; q++) if (improved[q] === 1) polish(search, q)
   return complete
 }
@@ -192,7 +215,7 @@ function searchPanel(search: Search, panel: number): boolean {
  * @param length of the intervals that begin or end there
  */
 function read(search: Search, x: number, sample: number, signal: Signal, length: number): void {
-  const { motion, watch, alive, best } = search
+  const { motion, watch, alive, floor } = search
   readSignal(motion, watch, sample, signal)
   note(search, x, signal, length)
   let beating = false
@@ -201,7 +224,7 @@ function read(search: Search, x: number, sample: number, signal: Signal, length:
     signal.free[q] = freeBound(motion, sizeOf(watch, q), sample)
     signal.freeFourth[q] = freeFourthBound(motion, sizeOf(watch, q), sample)
     // where cubics cannot follow the beats, forced motion and beats are bounded apart
-    beating ||= quartic(length) * signal.freeFourth[q]! > 0.1 * best.value[q]!
+    beating ||= quartic(length) * signal.freeFourth[q]! > 0.1 * floor[q]!
   }
   if (beating) readForced(motion, watch, sample, signal)
   else signal.forced.fill(Infinity)
@@ -210,12 +233,18 @@ function read(search: Search, x: number, sample: number, signal: Signal, length:
 const quartic = (length: number): number => (length * length * length * length) / 384
 
 /** Keeps what a sample shows where it is more than the best. */
-function note({ best, improved, width, panel }: Search, x: number, signal: Signal, around: number): void {
+function note(
+  { best, floor, improved, width, panel }: Search,
+  x: number,
+  signal: Signal,
+  around: number,
+): void {
   for (let q = 0; q < best.value.length; q++) {
     if (signal.value[q]! <= best.value[q]!) continue
     best.value[q] = signal.value[q]!
     best.panel[q] = panel
     best.x[q] = x
+    floor[q] = Math.max(floor[q]!, signal.value[q]!)
     improved[q] = 1
     width[q] = around
   }
@@ -239,7 +268,7 @@ function searchInterval(
   if (depth >= DEEPEST || ++search.intervals > MOST_INTERVALS) return false
   const { motion } = search
   const x = (a + b) / 2
-  const middle = parent === NONE ? MIDDLE : halfOf(motion, parent, side, x)
+  const middle = halfOf(motion, parent, side, x)
   const signal = (search.slots[depth + 2] ??= emptySignal(motion.orders))
   read(search, x, middle, signal, (b - a) / 2)
   // the side with the larger end first: what it finds spares the other
@@ -254,19 +283,19 @@ function searchInterval(
 
 /** Looks at the crests that cubics tell; whether an interval may hide more than they can tell. */
 function mustSplit(search: Search, a: number, atA: Signal, b: number, atB: Signal): boolean {
-  const { best, alive, watch, motion, crest, second, fourth, tolerance } = search
+  const { floor, alive, watch, motion, crest, second, fourth, tolerance } = search
   const axes = watch.axes.length
   const length = b - a
   loadCubics(crest, axes, motion.orders, atA, atB, length)
   let found = 0
   for (let q = 0; q < alive.length; q++) {
     if (alive[q] === 0) continue
-    const limit = best.value[q]! * (1 + tolerance)
+    const limit = floor[q]! * (1 + tolerance)
     const left = quartic(length) * (fourth[q]! + atA.freeFourth[q]!)
     if (left < limit && !mayExceed(crest, axes, motion.orders, q, limit - left)) continue
     const forced = Math.max(atA.forced[q]!, atB.forced[q]!) + (length * length * second[q]!) / 8
     if (forced + atA.free[q]! <= limit) continue
-    if (left > 0.5 * tolerance * best.value[q]!) return true
+    if (left > 0.5 * tolerance * floor[q]!) return true
     const place = crestPlace(crest)
     if (crestHeight(crest, place) + left <= limit) continue
     search.crests[found++] = a + place * length
@@ -281,8 +310,8 @@ function mustSplit(search: Search, a: number, atA: Signal, b: number, atB: Signa
 
 /** Moves a peak onto the top of the curve through three samples, closer each time. */
 function polish(search: Search, q: number): void {
-  const { best, motion, watch, spare } = search
-  if (best.panel[q] !== search.panel) return
+  const { best, floor, motion, watch, spare } = search
+  if (best.panel[q] !== search.panel || best.value[q]! < floor[q]!) return
   const at = (x: number) => {
     readSignal(motion, watch, sampleAt(motion, x), spare)
     return spare.value[q]!
@@ -299,6 +328,7 @@ function polish(search: Search, q: number): void {
     if (value > best.value[q]!) {
       best.value[q] = value
       best.x[q] = top
+      floor[q] = Math.max(floor[q]!, value)
     }
     step /= 8
   }

@@ -28,6 +28,10 @@ export interface RunUpScope {
   readonly down?: boolean
   /** how exactly peaks are searched, as a share of them */
   readonly tolerance?: number
+  /** true, for trials: of all mounts only the one with the largest peak is found, quickly, and no steady values */
+  readonly worstOnly?: boolean
+  /** directions wanted: x, y, z, resultant; left out: all */
+  readonly directions?: readonly boolean[]
 }
 
 export interface RunUpFinding {
@@ -63,7 +67,8 @@ export function runUpOf(
     const found = speedCourse(law, direction, hold, project.machine.duty, `runUp.${direction}.law`)
     problems.push(...found.problems)
     if (found.course === null) return null
-    const plan = planPanels(found.course, Math.max(...orders.map(({ order }) => order)))
+    const highest = Math.max(...orders.map(({ order }) => order))
+    const plan = planPanels(found.course, highest, scope.worstOnly === true ? 'quick' : 'fine')
     const march = marchThrough(plan, poles, orders)
     if (march === null) {
       problems.push({
@@ -77,6 +82,34 @@ export function runUpOf(
     return passOf(march, hold, watched, scope)
   }
   return { result: { up: pass('up'), down: pass('down') }, problems }
+}
+
+/** Largest steady values over a range of speeds: x, y, z, resultant; Infinity where there is no bound. */
+export interface SteadyValues {
+  readonly points: readonly { readonly id: string; readonly values: Float64Array }[]
+  readonly mounts: readonly { readonly id: string; readonly travel: Float64Array }[]
+}
+
+/**
+ * The steady motion to which a run-up is compared, by itself.
+ * @param range lowest and highest speed [rad/s]
+ * @returns null when a mode is not stable
+ */
+export function steadyValues(
+  project: Project,
+  observed: Observed,
+  loads: readonly SourceLoad[],
+  scope: RunUpScope,
+  range: readonly [number, number],
+): SteadyValues | null {
+  const form = firstOrder(observed, loads)
+  if (form === null) return null
+  const watched = watchAll(project, observed, form.modal, scope)
+  const peaks = steadyPeaks(form.poles, form.orders, watched.watches, range)
+  return {
+    points: watched.points.map(({ id, at }) => ({ id, values: peaks[at]! })),
+    mounts: watched.mounts.map(({ id, travel }) => ({ id, travel: peaks[travel]! })),
+  }
 }
 
 interface Watched {
@@ -111,9 +144,14 @@ function watchAll(project: Project, observed: Observed, modal: Modal, scope: Run
 function passOf(march: March, hold: number, watched: Watched, scope: RunUpScope): RunUpPass {
   const { plan, poles, loads } = march
   const tolerance = scope.tolerance ?? PEAK_TOLERANCE
-  const { peaks, complete } = findPeaks(march, watched.watches, tolerance)
-  const steady = steadyPeaks(poles, loads, watched.watches, speedRange(plan.course))
-  const one = (at: number, q: number) => peakOf(march, peaks[at]!, steady[at]!, q)
+  const { peaks, complete } = findPeaks(march, watched.watches, {
+    tolerance,
+    ...(scope.worstOnly === true ? { rivals: rivalsOf(watched) } : {}),
+    ...(scope.directions ? { wanted: scope.directions } : {}),
+  })
+  const steady =
+    scope.worstOnly === true ? [] : steadyPeaks(poles, loads, watched.watches, speedRange(plan.course))
+  const one = (at: number, q: number) => peakOf(march, peaks[at]!, steady[at]?.[q] ?? Infinity, q)
   const all = (at: number): RunUpPeaks => ({
     x: one(at, 0),
     y: one(at, 1),
@@ -135,19 +173,28 @@ function passOf(march: March, hold: number, watched: Watched, scope: RunUpScope)
   }
 }
 
+/** Forces of all mounts are rivals, and so are their travels; everything else stands by itself. */
+function rivalsOf({ watches, mounts }: Watched): readonly number[] {
+  const groups = watches.map((_, at) => 2 + at)
+  for (const { force, travel } of mounts) {
+    groups[force] = 0
+    groups[travel] = 1
+  }
+  return groups
+}
+
 function speedRange({ pieces }: SpeedCourse): readonly [number, number] {
   const speeds = pieces.flatMap(({ from, to }) => [from, to])
   return [Math.min(...speeds), Math.max(...speeds)]
 }
 
-function peakOf({ plan }: March, peaks: Peaks, steadyValues: Float64Array, q: number): RunUpPeak {
+function peakOf({ plan }: March, peaks: Peaks, largestSteady: number, q: number): RunUpPeak {
   const panel = peaks.panel[q] ?? 0
   const x = peaks.x[q] ?? -1
   const value = peaks.value[q] ?? 0
   const piece = plan.course.pieces[plan.piece[panel]!]!
   const within = plan.middle[panel]! + plan.half[panel]! * x
-  const largest = steadyValues[q] ?? 0
-  const steady = Number.isFinite(largest) ? largest : null
+  const steady = Number.isFinite(largestSteady) ? largestSteady : null
   return {
     value,
     time: plan.time[panel]! + plan.half[panel]! * x,
