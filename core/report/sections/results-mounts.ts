@@ -1,3 +1,4 @@
+import type { MountType } from '../../project/mounts.ts'
 import type { Project } from '../../project/project.ts'
 import type { Evaluation, LateralCase, LateralStatics, Statics } from '../../results.ts'
 import { figureLines } from '../component-figures.ts'
@@ -44,9 +45,18 @@ function settingBlocks(project: Project, { setting, mounts }: Statics, writer: W
   return [writeTable(table, writer)]
 }
 
+function isPlaced({ mounting }: Project, { id }: MountType): boolean {
+  return mounting.placed.some(({ type }) => type === id)
+}
+
+/** Whether the stiffness goes with the load. */
+function isCurved({ design, law }: MountType): boolean {
+  return design === null ? law.kind === 'curve' : design.component === 'airSpring'
+}
+
 /** Stiffness where the mounts stand, where that is not the same at every load. */
-function workingBlocks(project: Project, { mounts, iterations }: Statics, writer: Writer): readonly Block[] {
-  if (iterations === 0) return []
+function workingBlocks(project: Project, { mounts }: Statics, writer: Writer): readonly Block[] {
+  if (!project.mounting.types.some((type) => isCurved(type) && isPlaced(project, type))) return []
   const table = {
     caption: 'Mounts at their working points (along their own axes)',
     columns: [

@@ -122,6 +122,7 @@ describe('the report of mounts with a law', () => {
     const shims = evaluation.statics?.mounts.map(({ shim }) => shim) ?? []
     packing.forEach((row, index) => expect(Number(row[1])).toBeCloseTo(1000 * (shims[index] ?? NaN), 3))
     expect(text).toContain('level, aimed at equal loads')
+    expect(text).not.toContain('working points')
     expect(text).toContain('40 °C')
     const { rows, marks } = tableOf(report, 'Mounts under the load along its direction')
     expect(rows).toHaveLength(4)
