@@ -75,7 +75,7 @@ export function absorberSection(
   if (project.absorbers.length === 0) return null
   const blocks = project.absorbers.flatMap((absorber): readonly Block[] => {
     const result = evaluation.absorbers.find((candidate) => candidate.id === absorber.id)
-    const state = absorber.enabled ? '' : ' (switched off: not part of the response)'
+    const state = absorber.enabled ? '' : ' (not in place: not part of the response)'
     const heading: Block = { kind: 'heading', text: `${nameOf(absorber)}${state}` }
     return result
       ? [heading, ...sheetBlocks(absorber, result, evaluation, writer)]
@@ -154,7 +154,7 @@ export function absorberSheetCsv(project: Project, evaluation: Evaluation): stri
     return absorberEntries(absorber, result, evaluation).map(
       ({ label, value, dimension }): readonly Cell[] => [
         nameOf(absorber),
-        absorber.enabled ? 'on' : 'switched off',
+        absorber.enabled ? 'in place' : 'not in place',
         label,
         value === null ? '' : editableNumber(value, dimension, writer.system),
         unitLabel(dimension, writer.system),

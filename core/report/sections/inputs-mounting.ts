@@ -133,7 +133,7 @@ function absorberBlocks(project: Project, writer: Writer): readonly Block[] {
         sizeWords(size, writer),
         `${tuningWords(absorber)}${tuningFigures(absorber.tuning, writer)}`,
         absorber.strokeLimit,
-        absorber.enabled ? 'on' : 'switched off',
+        absorber.enabled ? 'in place' : 'not in place',
       ]
     }),
     marks: absorbers.map((absorber) => (absorber.enabled ? 'plain' : 'off')),

@@ -67,5 +67,5 @@ function absorberCount(project: Project): string {
   const { absorbers } = project
   if (absorbers.length === 0) return 'none'
   const enabled = absorbers.filter((absorber) => absorber.enabled).length
-  return `${enabled} switched on, ${absorbers.length - enabled} switched off`
+  return `${enabled} in place, ${absorbers.length - enabled} designed but not in place`
 }

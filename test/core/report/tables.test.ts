@@ -68,7 +68,7 @@ describe.each(demoProjects())('files of $file', ({ project }) => {
         'Spring stiffness along the line',
         'Damping coefficient along the line',
       ]) {
-        const line = lines.find((candidate) => candidate.startsWith(`${name},on,${quantity},`))
+        const line = lines.find((candidate) => candidate.startsWith(`${name},in place,${quantity},`))
         expect(Number(line?.split(',')[3])).toBeGreaterThan(0)
       }
     }
