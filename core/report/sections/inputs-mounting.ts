@@ -58,7 +58,7 @@ function typeBlocks(project: Project, writer: Writer): readonly Block[] {
     ]),
   }
   const limits = {
-    caption: 'Types of mount: limits and notes',
+    caption: `Types of mount: limits and notes${project.mounting.types.some(({ design }) => design !== null) ? ' (limits as typed, narrowed by what dimensions give)' : ''}`,
     columns: [
       textColumn('Type'),
       textColumn('Described by'),
