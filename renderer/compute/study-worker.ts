@@ -1,7 +1,9 @@
 import './no-eval.ts'
+import { assertNever } from '../../core/errors.ts'
 import { evaluate } from '../../core/evaluate.ts'
+import { dampingNeed } from '../../core/feasibility/damping-need.ts'
 import { withDuration } from './with-duration.ts'
-import type { StudyReply, StudyRequest } from './study-messages.ts'
+import type { DurationStudy, StudyReply, StudyRequest } from './study-messages.ts'
 
 /** The curves against speed play no part here. */
 const FEW_SPEEDS = 2
@@ -16,9 +18,23 @@ self.onmessage = (event: MessageEvent<StudyRequest>) => {
 }
 
 function answer(request: StudyRequest): void {
+  switch (request.kind) {
+    case 'durations':
+      return answerDurations(request)
+    case 'damping':
+      return say({
+        kind: 'damping',
+        ...dampingNeed(request.project, request.clearance, request.absorbers),
+      })
+    default:
+      return assertNever(request, 'request')
+  }
+}
+
+function answerDurations({ project, factors }: DurationStudy): void {
   // without requirements there is nothing to judge and no lever to try
-  const bare = { ...request.project, requirements: [] }
-  for (const factor of request.factors) {
+  const bare = { ...project, requirements: [] }
+  for (const factor of factors) {
     const { runUp } = evaluate(withDuration(bare, factor), { sweepPoints: FEW_SPEEDS })
     if (runUp) say({ kind: 'duration', factor, runUp })
   }

@@ -73,8 +73,15 @@ it('finds that a mixer that coasts down slowly moves too far, and that a brake h
   expect(value).toBe(peak?.value)
   await expect.poll(() => card.innerText(), PATIENT).toContain(formatQuantity(value, 'deflection', 'US'))
 
-  // a brake: by torque, on an inertia
+  // asked on demand: what more time or more damping would do
   await goTo(page, 'Run-up')
+  await page.getByRole('button', { name: 'Show the peaks for other durations' }).click()
+  await page.getByRole('img', { name: /largest peak against the time taken/ }).waitFor()
+  const damping = page.getByRole('region', { name: 'Damping that is needed' })
+  await damping.getByRole('button', { name: 'Find the least damping' }).click()
+  await expect.poll(() => damping.innerText(), PATIENT).toMatch(/damping ratio of .* times what there is/)
+
+  // a brake: by torque, on an inertia
   await choose(down, 'Speed', 'torque')
   await type(down, 'Friction and brake', '40 N m')
   await type(down, 'Inertia about the shaft', '2 kg m^2')

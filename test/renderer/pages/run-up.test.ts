@@ -1,8 +1,14 @@
 import { describe, expect, it } from 'vitest'
+import type { DampingNeed } from '../../../core/feasibility/damping-need.ts'
 import { blankProject } from '../../../core/project/create.ts'
 import { readProject } from '../../../core/project/read.ts'
 import { governingOf, peakGroups } from '../../../core/report/sections/run-up-peaks.ts'
 import type { RunUpPass, RunUpPeak, RunUpPeaks, RunUpResult } from '../../../core/results.ts'
+import {
+  clearanceChoices,
+  dampingRows,
+  dampingSentence,
+} from '../../../renderer/pages/run-up/damping-words.ts'
 import { addEntry, setLawField, switchLaw } from '../../../renderer/pages/run-up/law-edits.ts'
 import { courseWords, runUpSummary } from '../../../core/report/sections/run-up-words.ts'
 import {
@@ -183,5 +189,66 @@ describe('laws of speed', () => {
     expect(draft.runUp.up.law).toEqual({ by: 'table', entries: [] })
     addEntry(draft, 'up')
     expect(draft.runUp.up.law).toMatchObject({ entries: [{ time: 0, speed: 0 }] })
+  })
+})
+
+describe('damping that is needed', () => {
+  const at = (dampingRatio: number, peakAt: number | null): DampingNeed['present'] => ({
+    factor: 1,
+    dampingRatio,
+    types: [{ id: 't', lossFactor: 2 * dampingRatio, viscous: [0, 0, 0], equivalentViscous: [1, 2, 3] }],
+    peak: peakAt,
+    forceRatio: 0.1,
+    isolationEfficiency: 0.9,
+    supportForce: 50,
+  })
+  const need: DampingNeed = {
+    outcome: 'found',
+    referenceFrequency: 6.6,
+    present: at(0.03, 5e-3),
+    needed: at(0.075, 4e-3),
+    converged: true,
+    iterations: 9,
+    residual: 0,
+  }
+
+  it('is told against what there is', () => {
+    expect(dampingSentence(need, 'SI')).toBe(
+      'The clearance needs a damping ratio of 7.5 % in the vertical motion at 6.6 Hz, 2.5 times what there is.',
+    )
+    expect(dampingSentence({ ...need, present: at(0, null) }, 'SI')).toContain('the mounts have none')
+    expect(dampingSentence({ ...need, outcome: 'none' }, 'SI')).toContain('without any damping')
+    expect(dampingSentence({ ...need, outcome: 'outOfReach' }, 'SI')).toContain('Not even critical damping')
+  })
+
+  it('stands beside what it costs in isolation', () => {
+    const rows = dampingRows(project(), need)
+    expect(rows.find(({ label }) => label.startsWith('Largest'))).toMatchObject({
+      present: 5e-3,
+      needed: 4e-3,
+    })
+    expect(rows.find(({ label }) => label.endsWith('loss factor'))).toMatchObject({
+      present: 0.06,
+      needed: 0.15,
+    })
+  })
+
+  it('is asked for a clearance that is judged', () => {
+    const judged = readProject({
+      ...blankProject('x'),
+      requirements: [
+        { kind: 'runUpMotion', id: 'm', limit: '4 mm', during: 'down', direction: 'z' },
+        { kind: 'runUpMotion', id: 'off', limit: '4 mm', enabled: false },
+        { kind: 'runUpMotion', id: 'open' },
+        { kind: 'runUpMotion', id: 'lost', limit: '1 mm', place: 'point', point: 'gone' },
+      ],
+    })
+    expect(clearanceChoices(judged)).toEqual([
+      {
+        id: 'm',
+        label: '4 mm across the mounts, z',
+        clearance: { place: 'mounts', point: null, direction: 'z', during: 'down', limit: 4e-3 },
+      },
+    ])
   })
 })
