@@ -10,6 +10,7 @@ import { ABSORBER_CASE, minimaxTask, peakMap, peakMapTask } from './absorber.ts'
 import { BENCH_BODY, BENCH_MOUNTS } from './bench-machine.ts'
 import { modesOutput, modesTask, variantScales } from './modes-task.ts'
 import { askPeer, hasPeer } from './peer.ts'
+import { coarseMapTask, RUN_UP_CASE, runUpTask } from './run-up.ts'
 import { failingProject, standardProject } from './standard-project.ts'
 import { SWEEP_LOADS, sweepOmegas, sweepOutput, sweepTask } from './sweep-task.ts'
 import { time } from './timing.ts'
@@ -25,6 +26,13 @@ interface NetworkPeer {
     readonly forces: readonly (readonly [re: number, im: number])[]
     readonly frequencies: readonly number[]
   }
+}
+interface RunUpPeer {
+  readonly filters: number
+  readonly realFilters: number
+  readonly integrator: number
+  /** by mount and direction */
+  readonly peaks: readonly number[]
 }
 interface AbsorberPeer {
   readonly minimax: number
@@ -50,12 +58,14 @@ const ours = {
   modes: time(() => {
     modesTask(scales, modes)
   }),
+  runUp: time(runUpTask, 41, 30),
   minimax: time(minimaxTask, 25),
   peakMap: time(() => {
     peakMapTask(map)
   }),
   evaluation: time(() => evaluate(project), 41, 20),
   troubledEvaluation: time(() => evaluate(troubled), 41, 20),
+  feasibilityMap: time(coarseMapTask(project)),
 }
 const heapUsed = process.memoryUsage().heapUsed
 
@@ -67,6 +77,9 @@ const network = peers
       omega: Array.from(omegas),
       scales: Array.from(scales),
     })
+  : null
+const runUp = peers
+  ? askPeer<RunUpPeer>('peer_run_up.py', { ...RUN_UP_CASE, body: BENCH_BODY, mounts: BENCH_MOUNTS })
   : null
 const absorber = peers ? askPeer<AbsorberPeer>('peer_absorber.py', ABSORBER_CASE) : null
 
@@ -91,6 +104,25 @@ const report = {
       ...against(ours.modes.median, network && { 'batched eigh': network.modes }),
       ...(network ? { difference: largest(network.sample.frequencies, modes.frequencies.slice(-6)) } : {}),
     },
+    'T4 run-up': {
+      ...ours.runUp,
+      ...against(
+        ours.runUp.median,
+        runUp && {
+          'modal recursive filters': runUp.filters,
+          'filters, one start angle, coupling left out': runUp.realFilters,
+          'general integrator': runUp.integrator,
+        },
+      ),
+      ...(runUp
+        ? {
+            difference: largest(
+              runUp.peaks,
+              runUpTask().flatMap((mount) => mount.slice(0, 3)),
+            ),
+          }
+        : {}),
+    },
     'T5 minimax': {
       ...ours.minimax,
       ...against(
@@ -109,6 +141,7 @@ const report = {
     },
     'standard project, one evaluation': ours.evaluation,
     'the same with a failing requirement and its levers': ours.troubledEvaluation,
+    'feasibility map of the standard project, 16 x 10 cells': ours.feasibilityMap,
   },
   heapUsedMB: Math.round(heapUsed / 1e6),
 }

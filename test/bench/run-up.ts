@@ -1,10 +1,14 @@
+import { evaluate } from '../../core/evaluate.ts'
 import type { Observed } from '../../core/excitation/observed.ts'
 import type { SourceLoad } from '../../core/excitation/order-loads.ts'
+import { feasibilityMap } from '../../core/feasibility/feasibility-map.ts'
+import { startGrid } from '../../core/feasibility/map-refinement.ts'
 import { assemble } from '../../core/network/assemble.ts'
 import { undampedModes } from '../../core/network/modes.ts'
 import { responseSolver } from '../../core/network/response.ts'
 import { cross, subtract } from '../../core/numerics/vector3.ts'
 import type { Vec3 } from '../../core/project/fields.ts'
+import type { Project } from '../../core/project/project.ts'
 import { marchThrough } from '../../core/runup/march.ts'
 import { planPanels } from '../../core/runup/panel-plan.ts'
 import { findPeaks } from '../../core/runup/peak-search.ts'
@@ -62,5 +66,15 @@ function unbalanceLoad(): SourceLoad {
     inertial: true,
     force: { re, im },
     moment: { re: cross(arm, re), im: cross(arm, im) },
+  }
+}
+
+/** A coarse feasibility map about a project that has been evaluated already. */
+export function coarseMapTask(project: Project): () => void {
+  const evaluation = evaluate(project)
+  const vertical = evaluation.modes?.toSorted((a, b) => b.energyShare[2] - a.energyShare[2])[0]
+  const grid = startGrid(vertical?.frequency ?? 10, 16, 10)
+  return () => {
+    feasibilityMap(project, grid, evaluation)
   }
 }
