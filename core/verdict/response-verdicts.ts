@@ -120,7 +120,7 @@ function velocityLimit(requirement: Of<'vibrationVelocity'>): { limit: number | 
     limit,
     source:
       scale && machineClass
-        ? `${scale.source}, ${machineClass.name}, limit of ${requirement.zone} (table ${scale.provenance}: check the standard)`
+        ? `${scale.source}, ${machineClass.name}, limit of ${requirement.zone} (table ${scale.provenance}: check the standard; every computed order counts, also outside its frequency band)`
         : '',
   }
 }
