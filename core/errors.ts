@@ -30,3 +30,12 @@ function describeValue(value: unknown): string {
 export function assertNever(value: never, what: string): never {
   throw new Error(`${what}: unexpected ${JSON.stringify(value)}`)
 }
+
+/** Something about the inputs that a person must know, with the field where it arises. */
+export interface Problem {
+  /** path in the project, such as `machine.massProperties.mass` */
+  readonly field: string
+  readonly message: string
+  /** missing: not given yet; invalid: cannot be used; caution: usable, but look */
+  readonly kind: 'missing' | 'invalid' | 'caution'
+}

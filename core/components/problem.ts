@@ -1,4 +1,4 @@
-import type { Problem } from '../results.ts'
+import type { Problem } from '../errors.ts'
 
 /** What a person must know about a component; `field` counts from the component's own inputs. */
 export type ComponentProblem = Problem

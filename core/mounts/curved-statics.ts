@@ -3,12 +3,11 @@ import { settle, type RestoringSpring, type Settled } from '../network/settle.ts
 import { addScaled } from '../network/statics.ts'
 import { placeRow } from '../network/kinematics.ts'
 import { add, norm, scale, subtract } from '../numerics/vector3.ts'
-import type { Vec3 } from '../project/fields.ts'
+import type { Vec3, Vec6 } from '../project/fields.ts'
 import type { MassSummary } from '../results.ts'
 import type { StaticLoad } from '../network/statics.ts'
 import type { FittedMount } from './machine-network.ts'
 import { sixOf } from './statics.ts'
-import type { Vec6 } from '../results.ts'
 
 type Law = RestoringSpring['law']
 /** How a mount resists along one of its local axes. */

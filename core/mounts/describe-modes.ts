@@ -1,7 +1,8 @@
 import type { System } from '../network/assemble.ts'
 import { dampedModes } from '../network/damped-modes.ts'
 import { energyShares, type UndampedModes } from '../network/modes.ts'
-import type { Mode, Vec6 } from '../results.ts'
+import type { Mode } from '../results.ts'
+import type { Vec6 } from '../project/fields.ts'
 
 /** Motion in each coordinate of the machine: x along the shaft, y athwart, z up. */
 const NAMES = ['surge', 'sway', 'heave', 'roll', 'pitch', 'yaw'] as const

@@ -7,7 +7,8 @@ import { withGeometricStiffness } from '../network/statics.ts'
 import { cholesky } from '../numerics/cholesky.ts'
 import { unit } from '../numerics/vector3.ts'
 import type { Project } from '../project/project.ts'
-import type { MassSummary, Mode, Problem, Statics } from '../results.ts'
+import type { MassSummary, Mode, Problem } from '../results.ts'
+import type { Statics } from '../statics-results.ts'
 import { describeModes } from './describe-modes.ts'
 import {
   fitMounts,

@@ -2,8 +2,9 @@ import type { System } from '../network/assemble.ts'
 import { solvePositiveDefinite } from '../numerics/cholesky.ts'
 import { add, cross, dot, subtract } from '../numerics/vector3.ts'
 import { endLoads, staticEquilibrium, type StaticLoad } from '../network/statics.ts'
-import type { Vec3 } from '../project/fields.ts'
-import type { LateralStatics, MassSummary, MountStatics, Statics, Vec6 } from '../results.ts'
+import type { Vec3, Vec6 } from '../project/fields.ts'
+import type { MassSummary } from '../results.ts'
+import type { LateralStatics, MountStatics, Statics } from '../statics-results.ts'
 import { MACHINE, type FittedMount, type PlacedAbsorber } from './machine-network.ts'
 
 /** Statics with the forces that act on the machine's body, for its geometric stiffness. */

@@ -5,6 +5,8 @@ import { parseQuantity } from '../units/parse.ts'
 import { parseTemperature } from '../units/temperature.ts'
 
 export type Vec3 = [x: number, y: number, z: number]
+/** [ux uy uz rx ry rz] at the centre of gravity. */
+export type Vec6 = readonly [number, number, number, number, number, number]
 
 interface Limits {
   readonly above?: number

@@ -1,6 +1,7 @@
 import { effectiveMountType } from '../mounts/mount-type.ts'
 import type { Project } from '../project/project.ts'
-import type { MountStatics, Verdict } from '../results.ts'
+import type { Verdict } from '../results.ts'
+import type { MountStatics } from '../statics-results.ts'
 import { mountName, type Of } from './names.ts'
 import { reasonFor, unknownVerdict, verdictOf, type Computed } from './verdict.ts'
 

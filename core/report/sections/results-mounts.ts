@@ -1,6 +1,7 @@
 import type { MountType } from '../../project/mounts.ts'
 import type { Project } from '../../project/project.ts'
-import type { Evaluation, LateralCase, LateralStatics, Statics } from '../../results.ts'
+import type { Evaluation } from '../../results.ts'
+import type { LateralCase, LateralStatics, Statics } from '../../statics-results.ts'
 import { figureLines } from '../component-figures.ts'
 import { nameOf } from '../names.ts'
 import { column, textColumn, writeTable, type Cell } from '../raw-table.ts'

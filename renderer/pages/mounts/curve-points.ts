@@ -1,7 +1,7 @@
 import { curveLaw } from '../../../core/mounts/axial-law.ts'
 import type { MountType } from '../../../core/project/mounts.ts'
 import type { Project } from '../../../core/project/project.ts'
-import type { MountStatics } from '../../../core/results.ts'
+import type { MountStatics } from '../../../core/statics-results.ts'
 import type { ChartMark, ChartSeries } from '../../charts/chart-types.ts'
 import type { Column } from '../../components/table-columns.ts'
 

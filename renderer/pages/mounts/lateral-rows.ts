@@ -1,4 +1,4 @@
-import type { LateralStatics } from '../../../core/results.ts'
+import type { LateralStatics } from '../../../core/statics-results.ts'
 
 /** A mount under the lateral load, the worse of along and against its direction. */
 export interface LateralRow {

@@ -1,5 +1,5 @@
 import type { Project } from '../../../core/project/project.ts'
-import type { Statics } from '../../../core/results.ts'
+import type { Statics } from '../../../core/statics-results.ts'
 
 /** Fixes the packing that levelling found as the packing that is built, in place. */
 export function keepPacking(draft: Project, statics: Statics): void {

@@ -1,6 +1,6 @@
 import type { Mounting, MountType, PlacedMount } from '../../../core/project/mounts.ts'
 import type { Project } from '../../../core/project/project.ts'
-import type { MountStatics } from '../../../core/results.ts'
+import type { MountStatics } from '../../../core/statics-results.ts'
 import type { UnitSystem } from '../../../core/units/dimensions.ts'
 import { formatNumber } from '../../../core/units/format.ts'
 import type { Column } from '../../components/table-columns.ts'

@@ -2,7 +2,8 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { designAbsorber, type AbsorberContext } from '../../../core/absorber/design.ts'
 import { absorberSchema, type Absorber } from '../../../core/project/absorber.ts'
-import type { Mode, Vec6 } from '../../../core/results.ts'
+import type { Mode } from '../../../core/results.ts'
+import type { Vec6 } from '../../../core/project/fields.ts'
 
 // one seed for all, so that a failure here is a change of the code
 fc.configureGlobal({ seed: 1928 })

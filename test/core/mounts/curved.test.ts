@@ -2,7 +2,8 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { evaluate } from '../../../core/evaluate.ts'
 import { InputError } from '../../../core/errors.ts'
-import type { Evaluation, Statics } from '../../../core/results.ts'
+import type { Evaluation } from '../../../core/results.ts'
+import type { Statics } from '../../../core/statics-results.ts'
 import { CORNERS, sketchProject, type Sketch } from './machine-project.ts'
 
 function evaluated(sketch: Sketch): Evaluation {

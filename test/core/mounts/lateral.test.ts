@@ -1,7 +1,7 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { evaluate } from '../../../core/evaluate.ts'
-import type { LateralCase, LateralStatics } from '../../../core/results.ts'
+import type { LateralCase, LateralStatics } from '../../../core/statics-results.ts'
 import { CORNERS, sketchProject, type Sketch } from './machine-project.ts'
 
 const WEIGHT = 400 * 9.80665

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { evaluate } from '../../../core/evaluate.ts'
-import type { Statics } from '../../../core/results.ts'
+import type { Statics } from '../../../core/statics-results.ts'
 import { CORNERS, sketchProject, type Sketch } from './machine-project.ts'
 
 const GRAVITY = 9.80665

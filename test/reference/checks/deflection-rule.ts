@@ -1,7 +1,7 @@
 /** Groups A and H: the rule of static deflection, as each mount reports it, on a curve that is a line. */
 import { evaluate } from '../../../core/evaluate.ts'
 import type { Vec3 } from '../../../core/project/fields.ts'
-import type { MountStatics } from '../../../core/results.ts'
+import type { MountStatics } from '../../../core/statics-results.ts'
 import { curvedProject } from '../cases/curved.ts'
 import { casesOf, once, type Check, type ReferenceCase } from '../check-type.ts'
 import { checkMaker, missing } from './parts.ts'

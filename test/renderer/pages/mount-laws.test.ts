@@ -4,7 +4,7 @@ import { componentDesignSchema } from '../../../core/project/component-designs.t
 import type { MountType } from '../../../core/project/mounts.ts'
 import type { Project } from '../../../core/project/project.ts'
 import { readProject } from '../../../core/project/read.ts'
-import type { LateralCase } from '../../../core/results.ts'
+import type { LateralCase } from '../../../core/statics-results.ts'
 import { writeBlock } from '../../../renderer/components/table-columns.ts'
 import {
   addPoint,
