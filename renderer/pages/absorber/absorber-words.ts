@@ -55,8 +55,16 @@ export function referenceWords({ excitation, response }: Objective): string {
   }
 }
 
-/** Tuning of another kind, with what can be kept of the present one. */
-export function switchTuning(present: AbsorberTuning, by: AbsorberTuning['by']): AbsorberTuning {
+/**
+ * Tuning of another kind, with what can be kept of the present one. A band over the whole machine
+ * begins half an octave about the host.
+ * @param hostFrequency [Hz]; null where it is not known, and then the band is left open
+ */
+export function switchTuning(
+  present: AbsorberTuning,
+  by: AbsorberTuning['by'],
+  hostFrequency: number | null,
+): AbsorberTuning {
   const objective: Objective =
     present.by === 'fixedPoints' || present.by === 'minimax'
       ? present.objective
@@ -67,7 +75,11 @@ export function switchTuning(present: AbsorberTuning, by: AbsorberTuning['by']):
     case 'minimax':
       return { by, objective }
     case 'networkMinimax':
-      return { by, lowest: null, highest: null }
+      return {
+        by,
+        lowest: hostFrequency === null ? null : Number((hostFrequency / Math.SQRT2).toPrecision(3)),
+        highest: hostFrequency === null ? null : Number((hostFrequency * Math.SQRT2).toPrecision(3)),
+      }
     case 'speed':
       return { by, speed: null, order: 1, dampingRatio }
     case 'given':

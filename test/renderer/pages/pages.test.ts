@@ -165,14 +165,24 @@ describe('a new absorber', () => {
   })
   it('keeps its objective or its damping when the rule of tuning changes', () => {
     const objective = { excitation: 'unbalance', response: 'acceleration' } as const
-    expect(switchTuning({ by: 'minimax', objective }, 'fixedPoints')).toEqual({
+    expect(switchTuning({ by: 'minimax', objective }, 'fixedPoints', null)).toEqual({
       by: 'fixedPoints',
       objective,
     })
-    expect(switchTuning({ by: 'given', frequency: 9, dampingRatio: 0.07 }, 'speed')).toMatchObject({
+    expect(switchTuning({ by: 'given', frequency: 9, dampingRatio: 0.07 }, 'speed', null)).toMatchObject({
       by: 'speed',
       dampingRatio: 0.07,
     })
+  })
+
+  it('begins a band over the whole machine half an octave about the host, where that is known', () => {
+    const band = switchTuning(
+      { by: 'minimax', objective: { excitation: 'force', response: 'displacement' } },
+      'networkMinimax',
+      6.628,
+    )
+    expect(band).toEqual({ by: 'networkMinimax', lowest: 4.69, highest: 9.37 })
+    expect(switchTuning(band, 'networkMinimax', null)).toMatchObject({ lowest: null, highest: null })
   })
 })
 
