@@ -1,6 +1,7 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
 import type { Poles } from '../network/poles.ts'
-import { boundForced, fillPanel, forcedModes, panelEnd, panelWork, type PanelWork } from './panel.ts'
+import { fillPanel, forcedModes, panelEnd, panelWork, type PanelWork } from './panel.ts'
+import { boundPanel, panelBounds, type PanelBounds } from './panel-bound.ts'
 import type { PanelPlan } from './panel-plan.ts'
 import type { StateLoad } from './state-load.ts'
 
@@ -12,10 +13,7 @@ export interface March {
   /** y exp(-i order phase): order o, panel p, state j at ((o (panels + 1)) + p) count + j */
   readonly stateRe: Float64Array
   readonly stateIm: Float64Array
-  /** bounds over the panel: forced motion of mode r at (o panels + p) modes + r, free vibration of state j at (o panels + p) count + j */
-  readonly displacement: Float64Array
-  readonly velocity: Float64Array
-  readonly free: Float64Array
+  readonly bounds: PanelBounds
   /** share of a steady motion that the cut of the series may have cost, summed over the panels */
   readonly cut: number
 }
@@ -28,7 +26,7 @@ export const stateAt = ({ plan, poles }: March, order: number, panel: number): n
  * @returns null when the motion it starts from has no bound: a resonance without damping at the first speed
  */
 export function marchThrough(plan: PanelPlan, poles: Poles, loads: readonly StateLoad[]): March | null {
-  const { count, modes } = poles
+  const { count } = poles
   const states = loads.length * (plan.count + 1) * count
   const work = panelWork(poles, plan.degree)
   const march = {
@@ -37,9 +35,7 @@ export function marchThrough(plan: PanelPlan, poles: Poles, loads: readonly Stat
     loads,
     stateRe: new Float64Array(states),
     stateIm: new Float64Array(states),
-    displacement: new Float64Array(loads.length * plan.count * modes),
-    velocity: new Float64Array(loads.length * plan.count * modes),
-    free: new Float64Array(loads.length * plan.count * count),
+    bounds: panelBounds(poles, loads.length, plan.count),
     cut: 0,
   }
   const first = plan.course.pieces[0]?.from ?? 0
@@ -53,12 +49,7 @@ export function marchThrough(plan: PanelPlan, poles: Poles, loads: readonly Stat
     for (let p = 0; p < plan.count; p++) {
       fillPanel(work, plan, p, poles, loads[o]!, march.stateRe, march.stateIm, stateAt(march, o, p))
       panelEnd(work.panel, march.stateRe, march.stateIm, stateAt(march, o, p + 1))
-      const { panel } = work
-      const at = o * plan.count + p
-      boundForced(work, poles, plan.half[p]!, march.displacement, march.velocity, at * modes)
-      for (let j = 0; j < count; j++) {
-        march.free[at * count + j] = Math.hypot(panel.freeRe[j]!, panel.freeIm[j]!)
-      }
+      boundPanel(march.bounds, work, poles, plan.half[p]!, o, p)
       march.cut += work.panel.cut[0]!
     }
   }

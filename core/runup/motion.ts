@@ -3,7 +3,7 @@ import { refill, type March } from './march.ts'
 import { panelWork, TERMS, type PanelWork } from './panel.ts'
 
 /** Samples kept of one panel, fine and quick; further ones are computed each time they are asked for. */
-const CAPACITY = { fine: 320, quick: 64 } as const
+const CAPACITY = { fine: 160, quick: 48 } as const
 /** Free vibrations smaller than this share of all motion of the panel are left out, fine and quick. */
 const NEGLIGIBLE = { fine: 1e-11, quick: 1e-6 } as const
 /** Curves kept of each mode, re and im: displacement, its first and second derivative by x, its forced part and that one's derivative. */

@@ -2,7 +2,7 @@
 import { speedOf, type SpeedCourse, type SpeedPiece } from './speed-course.ts'
 
 /** Highest power in the series of speed, phase and force over a panel: fine, and quick for trials. */
-export const DEGREE = { fine: 20, quick: 10 } as const
+export const DEGREE = { fine: 16, quick: 10 } as const
 
 /** Stretches of time over which the phase is a straight line and a small rest. */
 export interface PanelPlan {
@@ -22,7 +22,7 @@ export interface PanelPlan {
   readonly complete: boolean
 }
 
-/** By how much the phase may bend over a panel [rad]: exp(i bend x²) is then cut at 3e-11, quick at 6e-6. */
+/** By how much the phase may bend over a panel [rad]: exp(i bend x²) is then cut at 7e-10, quick at 6e-6. */
 const BEND = 0.4
 /** Largest last terms of the phase's own series [rad], fine and quick. */
 const PHASE_TAIL = { fine: 1e-10, quick: 1e-5 } as const

@@ -3,7 +3,7 @@ import type { Poles } from '../network/poles.ts'
 import { DEGREE, speedSeries, type PanelPlan } from './panel-plan.ts'
 import type { StateLoad } from './state-load.ts'
 
-/** So many more powers has a state's own series than its force's; exp(3.5 x) is then cut at 1e-14, quick at 1e-6. */
+/** So many more powers has a state's own series than its force's; exp(3.5 x) is then cut at 2e-11, quick at 1e-6. */
 const MORE_POWERS = 8
 /** Room for every series. */
 export const TERMS = DEGREE.fine + MORE_POWERS + 1
@@ -21,8 +21,9 @@ export interface Panel {
   /** P_j: power k at j TERMS + k */
   readonly forcedRe: Float64Array
   readonly forcedIm: Float64Array
-  /** how many powers P_j has */
+  /** how many powers P_j has, and whether the state is slow against the panel: 1 */
   readonly terms: Int32Array
+  readonly slow: Uint8Array
   readonly freeRe: Float64Array
   readonly freeIm: Float64Array
   readonly kappaRe: Float64Array
@@ -45,11 +46,6 @@ export interface PanelWork {
   readonly speedSquared: Float64Array
   /** force per unit: constant, squared, inertial law */
   readonly series: readonly (readonly [Float64Array, Float64Array])[]
-  /** for bounds */
-  readonly headRe: Float64Array
-  readonly headIm: Float64Array
-  readonly tail: Float64Array
-  readonly tailSlope: Float64Array
 }
 
 export function panelWork({ count, modes }: Poles, degree: number): PanelWork {
@@ -61,6 +57,7 @@ export function panelWork({ count, modes }: Poles, degree: number): PanelWork {
       forcedRe: make(count * TERMS),
       forcedIm: make(count * TERMS),
       terms: new Int32Array(count),
+      slow: new Uint8Array(count),
       freeRe: make(count),
       freeIm: make(count),
       kappaRe: make(count),
@@ -79,10 +76,6 @@ export function panelWork({ count, modes }: Poles, degree: number): PanelWork {
       [terms(), terms()],
       [terms(), terms()],
     ],
-    headRe: make(HEAD),
-    headIm: make(HEAD),
-    tail: make(count),
-    tailSlope: make(count),
   }
 }
 
@@ -220,6 +213,7 @@ function forcedMotion({ panel, series }: PanelWork, load: StateLoad, j: number, 
   const x = panel.kappaRe[j]!
   const y = panel.kappaIm[j]!
   const slow = x * x + y * y < SLOW * SLOW
+  panel.slow[j] = slow ? 1 : 0
   panel.terms[j] = degree + 1 + (slow ? MORE_POWERS : 0)
   if (slow) seriesUp(re, im, at, x, y, degree)
   else seriesDown(re, im, at, x, y, degree)
@@ -314,64 +308,6 @@ export function forcedModes({ panel }: PanelWork, poles: Poles): void {
     }
   }
   panel.top[0] = highestPower(modesRe, modesIm, poles.modes)
-}
-
-/** Powers of which the bound of a mode is taken together; of the higher ones, state by state. */
-const HEAD = 6
-
-/**
- * Bounds of the modes' forced motion over the panel, without all their powers: no series is larger than
- * the sum of its coefficients' sizes on -1 to 1. Velocity is P' / half + i rate P.
- */
-export function boundForced(
-  { panel, headRe, headIm, tail, tailSlope }: PanelWork,
-  poles: Poles,
-  half: number,
-  displacement: Float64Array,
-  velocity: Float64Array,
-  at: number,
-): void {
-  const { forcedRe, forcedIm, terms } = panel
-  for (let j = 0; j < poles.count; j++) {
-    let sum = 0
-    let slope = 0
-    for (let k = HEAD; k < terms[j]!; k++) {
-      const p = forcedRe[j * TERMS + k]!
-      const q = forcedIm[j * TERMS + k]!
-      const size = Math.sqrt(p * p + q * q)
-      sum += size
-      slope += k * size
-    }
-    tail[j] = sum
-    tailSlope[j] = slope
-  }
-  for (let r = 0; r < poles.modes; r++) {
-    headRe.fill(0)
-    headIm.fill(0)
-    let size = 0
-    let slope = 0
-    for (let j = 0; j < poles.count; j++) {
-      const a = poles.shapeRe[r * poles.count + j]!
-      const b = poles.shapeIm[r * poles.count + j]!
-      if (a === 0 && b === 0) continue
-      for (let k = 0; k < HEAD; k++) {
-        const p = forcedRe[j * TERMS + k]!
-        const q = forcedIm[j * TERMS + k]!
-        headRe[k]! += a * p - b * q
-        headIm[k]! += a * q + b * p
-      }
-      const part = Math.sqrt(a * a + b * b)
-      size += part * tail[j]!
-      slope += part * tailSlope[j]!
-    }
-    for (let k = 0; k < HEAD; k++) {
-      const one = Math.sqrt(headRe[k]! * headRe[k]! + headIm[k]! * headIm[k]!)
-      size += one
-      slope += k * one
-    }
-    displacement[at + r] = size
-    velocity[at + r] = slope / half + Math.abs(panel.rate[0]!) * size
-  }
 }
 
 /** Powers smaller than this share of the largest of a series are rounding. */

@@ -3,6 +3,7 @@ import { amplitudesOfStates, amplitudeWork, objectivesOf, type AmplitudeWork } f
 import { crestHeight, crestPlace, crestWork, loadCubics, mayExceed, type CrestWork } from './crest.ts'
 import { stateAt, type March } from './march.ts'
 import { BEGIN, END, enterPanel, halfOf, motionOf, sampleAt, WHOLE, type Motion } from './motion.ts'
+import { closeBounds, roughBound } from './panel-bound.ts'
 import {
   emptySignal,
   fourthBound,
@@ -45,6 +46,8 @@ interface Search {
   readonly spare: Signal
   /** whether an objective can exceed its best in the panel at all, and whether it has, how far around it lies open */
   readonly alive: Uint8Array
+  /** bounds over the panel looked at */
+  readonly close: Float64Array
   readonly improved: Uint8Array
   readonly width: Float64Array
   /** bounds of the forced motion's derivatives */
@@ -135,6 +138,7 @@ function newSearch(
       x: new Float64Array(objectives).fill(-1),
     },
     alive: new Uint8Array(objectives),
+    close: new Float64Array(4),
     improved: new Uint8Array(objectives),
     width: new Float64Array(objectives),
     second: new Float64Array(objectives),
@@ -167,30 +171,26 @@ const sizeOf = (watch: Watch, q: number): WatchSize =>
   q < watch.axes.length ? watch.axes[q]!.size : watch.all
 
 /** Marks what may exceed its best in a panel. @returns whether anything may */
-function panelMayExceed({ march, watch, floor, wanted, tolerance, alive }: Search, panel: number): boolean {
+function panelMayExceed(
+  { march, watch, floor, wanted, tolerance, alive, close }: Search,
+  panel: number,
+): boolean {
+  const { bounds, plan, loads } = march
   let any = false
   for (let q = 0; q < alive.length; q++) {
-    const may =
-      wanted[q] === true &&
-      panelBound(march, sizeOf(watch, q), panel, watch.moves) > floor[q]! * (1 + tolerance)
-    alive[q] = may ? 1 : 0
-    any ||= may
+    const rough =
+      wanted[q] === true ? roughBound(bounds, sizeOf(watch, q), watch.moves, loads.length, panel) : 0
+    alive[q] = rough > floor[q]! * (1 + tolerance) ? 1 : 0
+    any ||= alive[q] === 1
+  }
+  if (!any) return false
+  any = false
+  closeBounds(bounds, watch, plan.half[panel]!, loads.length, panel, close)
+  for (let q = 0; q < alive.length; q++) {
+    if (!(close[q]! > floor[q]! * (1 + tolerance))) alive[q] = 0
+    any ||= alive[q] === 1
   }
   return any
-}
-
-function panelBound(march: March, size: WatchSize, panel: number, moves: boolean): number {
-  const { modes, count } = march.poles
-  let bound = 0
-  for (let o = 0; o < march.loads.length; o++) {
-    const at = o * march.plan.count + panel
-    for (let r = 0; r < modes; r++) {
-      bound += size.displacement[r]! * march.displacement[at * modes + r]!
-      if (moves) bound += size.velocity[r]! * march.velocity[at * modes + r]!
-    }
-    for (let j = 0; j < count; j++) bound += size.state[j]! * march.free[at * count + j]!
-  }
-  return bound
 }
 
 /** @returns whether nothing was given up */
