@@ -29,6 +29,7 @@ export default defineConfig({
           include: ['test/journeys/**/*.test.ts'],
           testTimeout: 180_000,
           hookTimeout: 60_000,
+          expect: { poll: { timeout: 30_000 } },
           fileParallelism: false,
           ...building,
         },

@@ -57,6 +57,9 @@ export async function buildStale({ force = false, say = console.log } = {}) {
   }
 }
 
+// A caller's own setting, such as a test runner's, must not put the libraries' development half into the build.
+process.env.NODE_ENV = 'production'
+
 /** The old build stays in place until the new one is complete, since a host may be serving it. */
 async function buildOne(target, stamp) {
   const folder = join(OUT, target.name)
