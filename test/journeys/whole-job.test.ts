@@ -107,6 +107,10 @@ it('takes a shaking fan from a blank sheet to an absorber that cures it, and fin
   const velocity = await addRequirement(page, 'Vibration velocity of a point')
   await choose(velocity, 'Direction', 'z')
   await type(velocity, 'Largest velocity, RMS', '0.15 in/s')
+  // the verdict comes while the field is still being edited, and leaves it the focus
+  await verdict(page, /^Vibration velocity.*: fails/).waitFor()
+  const limit = velocity.getByRole('textbox', { name: 'Largest velocity, RMS' })
+  expect(await limit.evaluate((field) => field === document.activeElement)).toBe(true)
   await velocity.getByRole('button', { name: 'Done' }).click()
   const isolation = await addRequirement(page, 'Isolation')
   await type(isolation, 'Least isolation efficiency', '90')
