@@ -5,8 +5,9 @@ import { emptySignal, readSignal } from './signal.ts'
 import { speedsAt } from './speed-course.ts'
 import type { Watch } from './watch.ts'
 
-/** Samples of a smooth panel, per beat of a free vibration, and of any panel at most. */
+/** Samples of a smooth panel and of the whole at least, per beat of a free vibration, and of any panel at most. */
 const SMOOTH = 8
+const LEAST_OF_ALL = 240
 const PER_BEAT = 8
 const MOST_PER_PANEL = 600
 /** Free vibrations below this share of the peak do not show on a chart. */
@@ -70,7 +71,10 @@ function samplesFor({ panels, free, march, orders }: Motion, watch: Watch, peak:
       beats = Math.max(beats, Math.abs(panels[o]!.panel.kappaIm[j]!) / Math.PI)
     }
   }
-  return Math.min(MOST_PER_PANEL, Math.max(SMOOTH, Math.ceil(PER_BEAT * beats)))
+  return Math.min(
+    MOST_PER_PANEL,
+    Math.max(SMOOTH, Math.ceil(LEAST_OF_ALL / march.plan.count), Math.ceil(PER_BEAT * beats)),
+  )
 }
 
 /** Indices kept: of each stretch of samples the first, the lowest and the highest, in their order. */

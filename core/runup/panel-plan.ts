@@ -26,7 +26,7 @@ export interface PanelPlan {
 const BEND = 0.4
 /** Largest last terms of the phase's own series [rad], fine and quick. */
 const PHASE_TAIL = { fine: 1e-10, quick: 1e-5 } as const
-const MOST_PANELS = 40_000
+const MOST_PANELS = 20_000
 
 /** Cuts a course into panels. @param order the highest order that acts */
 export function planPanels(
