@@ -58,7 +58,7 @@ export function panelBounds({ modes, count }: Poles, orders: number, panels: num
 /** Takes the bounds of one panel of an order. @param half its half length [s] */
 export function boundPanel(
   bounds: PanelBounds,
-  { panel, series }: PanelWork,
+  { panel, force }: PanelWork,
   poles: Poles,
   half: number,
   o: number,
@@ -69,7 +69,7 @@ export function boundPanel(
   const block = o * bounds.panels + p
   const rate = Math.abs(panel.rate[0]!)
   bounds.rate[block] = panel.rate[0]!
-  const [baseRe, baseIm] = series[0]!
+  const { baseRe, baseIm } = force
   for (let k = 0; k < HEAD; k++) {
     bounds.turnRe[block * HEAD + k] = baseRe[k]!
     bounds.turnIm[block * HEAD + k] = -baseIm[k]!

@@ -1,5 +1,6 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within arrays sized by construction */
 import type { Poles } from '../network/poles.ts'
+import { emptyForceSeries, fillForceSeries, type ForceSeries } from './force-series.ts'
 import { DEGREE, speedSeries, type PanelPlan } from './panel-plan.ts'
 import type { StateLoad } from './state-load.ts'
 
@@ -42,15 +43,11 @@ export interface Panel {
 
 export interface PanelWork {
   readonly panel: Panel
-  readonly speed: Float64Array
-  readonly speedSquared: Float64Array
-  /** force per unit: constant, squared, inertial law */
-  readonly series: readonly (readonly [Float64Array, Float64Array])[]
+  readonly force: ForceSeries
 }
 
 export function panelWork({ count, modes }: Poles, degree: number): PanelWork {
   const make = (size: number) => new Float64Array(size)
-  const terms = () => make(degree + 1)
   return {
     panel: {
       count,
@@ -69,13 +66,7 @@ export function panelWork({ count, modes }: Poles, degree: number): PanelWork {
       phase: make(2),
       cut: make(1),
     },
-    speed: terms(),
-    speedSquared: terms(),
-    series: [
-      [terms(), terms()],
-      [terms(), terms()],
-      [terms(), terms()],
-    ],
+    force: emptyForceSeries(degree),
   }
 }
 
@@ -95,10 +86,12 @@ export function fillPanel(
 ): void {
   const half = plan.half[index]!
   const piece = plan.course.pieces[plan.piece[index]!]!
-  speedSeries(piece, plan.middle[index]!, half, work.speed)
-  forceSeries(work, load.order, half)
-  const { panel, speed } = work
-  const w = load.order * speed[0]!
+  const { panel, force } = work
+  speedSeries(piece, plan.middle[index]!, half, force.speed)
+  fillForceSeries(force, load.order, half)
+  panel.phase.set(force.phase)
+  panel.cut[0] = force.cut[0]!
+  const w = load.order * force.speed[0]!
   panel.rate[0] = w
   const turnRe = Math.cos(panel.phase[0]!)
   const turnIm = Math.sin(panel.phase[0]!)
@@ -112,75 +105,8 @@ export function fillPanel(
   }
 }
 
-/** exp(i order rest), the same times w², and times w² - i w', as power series in x. */
-function forceSeries({ series, speed, speedSquared, panel }: PanelWork, order: number, half: number): void {
-  const degree = speed.length - 1
-  const [[baseRe, baseIm], [squareRe, squareIm], [massRe, massIm]] = series as [
-    [Float64Array, Float64Array],
-    [Float64Array, Float64Array],
-    [Float64Array, Float64Array],
-  ] // three by construction
-  let begin = 0
-  let end = 0
-  let top = 1
-  for (let k = 1; k < degree; k++) {
-    // rest' = half (speed - speed at the middle)
-    const term = (order * half * speed[k]!) / (k + 1)
-    if (term !== 0) top = k
-    end += term
-    begin += k % 2 === 0 ? -term : term
-  }
-  panel.phase[0] = begin
-  panel.phase[1] = end
-  baseRe[0] = 1
-  baseIm[0] = 0
-  for (let k = 1; k <= degree; k++) {
-    let re = 0
-    let im = 0
-    // k E_k = i sum (m rest_m) E_(k-m), with m rest_m = order half speed_(m-1)
-    for (let m = 2; m <= Math.min(k, top + 1); m++) {
-      const slope = order * half * speed[m - 1]!
-      re -= slope * baseIm[k - m]!
-      im += slope * baseRe[k - m]!
-    }
-    baseRe[k] = re / k
-    baseIm[k] = im / k
-  }
-  for (let m = 0; m <= degree; m++) speedSquared[m] = m <= 2 * top ? coefficientOfSquare(speed, m) : 0
-  for (let k = 0; k <= degree; k++) {
-    let re = 0
-    let im = 0
-    let massR = 0
-    let massI = 0
-    for (let m = 0; m <= Math.min(k, 2 * top); m++) {
-      const square = order * order * speedSquared[m]!
-      re += square * baseRe[k - m]!
-      im += square * baseIm[k - m]!
-      if (m < top) {
-        const rate = (order * (m + 1) * speed[m + 1]!) / half
-        massR += rate * baseIm[k - m]!
-        massI -= rate * baseRe[k - m]!
-      }
-    }
-    squareRe[k] = re
-    squareIm[k] = im
-    massRe[k] = re + massR
-    massIm[k] = im + massI
-  }
-  const last =
-    Math.hypot(baseRe[degree]!, baseIm[degree]!) + Math.hypot(baseRe[degree - 1]!, baseIm[degree - 1]!)
-  panel.cut[0] = last
-}
-
-/** Coefficient m of the square of a series. */
-function coefficientOfSquare(series: Float64Array, m: number): number {
-  let sum = 0
-  for (let i = 0; i <= m; i++) sum += series[i]! * series[m - i]!
-  return sum
-}
-
-function forcedMotion({ panel, series }: PanelWork, load: StateLoad, j: number, half: number): void {
-  const degree = series[0]![0].length - 1
+function forcedMotion({ panel, force }: PanelWork, load: StateLoad, j: number, half: number): void {
+  const degree = force.speed.length - 1
   const { forcedRe: re, forcedIm: im } = panel
   const at = j * TERMS
   const a = load.constantRe[j]!
@@ -189,9 +115,7 @@ function forcedMotion({ panel, series }: PanelWork, load: StateLoad, j: number, 
   const d = load.squaredIm[j]!
   const e = load.inertialRe[j]!
   const f = load.inertialIm[j]!
-  const [baseRe, baseIm] = series[0]!
-  const [squareRe, squareIm] = series[1]!
-  const [massRe, massIm] = series[2]!
+  const { baseRe, baseIm, squareRe, squareIm, massRe, massIm } = force
   for (let k = 0; k <= degree; k++) {
     re[at + k] =
       half *

@@ -27,7 +27,7 @@ export function traceOf(march: March, watch: Watch, times: Float64Array): Trace 
     panel = next
     const half = plan.half[panel]!
     const x = (time - plan.time[panel]!) / half
-    const straight = plan.angle[panel]! + half * motion.panels[0]!.speed[0]! * x
+    const straight = plan.angle[panel]! + half * motion.panels[0]!.force.speed[0]! * x
     readSignal(motion, watch, sampleAt(motion, x), signal)
     for (let o = 0; o < loads.length; o++) {
       const cos = Math.cos(loads[o]!.order * straight)
