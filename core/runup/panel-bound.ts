@@ -191,7 +191,8 @@ export function roughBound(
 }
 
 /**
- * Closer ones, modes taken together, of every direction and of the resultant, written to `target`.
+ * Closer ones, modes taken together, written to `target`: of the directions and the resultant that are
+ * wanted (1).
  */
 export function closeBounds(
   bounds: PanelBounds,
@@ -199,19 +200,22 @@ export function closeBounds(
   half: number,
   orders: number,
   p: number,
+  wanted: Uint8Array,
   target: Float64Array,
 ): void {
   const { axes } = watch
+  const all = wanted[axes.length] === 1
   target.fill(0)
   for (let o = 0; o < orders; o++) {
     const block = o * bounds.panels + p
     let square = 0
     for (let d = 0; d < axes.length; d++) {
+      if (!all && wanted[d] !== 1) continue
       const forced = forcedBound(bounds, watch, axes[d]!, half, block)
       square += forced * forced
       target[d]! += forced + freeBound(bounds, axes[d]!.size, block)
     }
-    if (axes.length > 1) target[axes.length]! += Math.sqrt(square) + freeBound(bounds, watch.all, block)
+    if (all) target[axes.length]! += Math.sqrt(square) + freeBound(bounds, watch.all, block)
   }
 }
 

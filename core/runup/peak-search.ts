@@ -185,7 +185,7 @@ function panelMayExceed(
   }
   if (!any) return false
   any = false
-  closeBounds(bounds, watch, plan.half[panel]!, loads.length, panel, close)
+  closeBounds(bounds, watch, plan.half[panel]!, loads.length, panel, alive, close)
   for (let q = 0; q < alive.length; q++) {
     if (!(close[q]! > floor[q]! * (1 + tolerance))) alive[q] = 0
     any ||= alive[q] === 1

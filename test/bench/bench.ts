@@ -58,7 +58,7 @@ const ours = {
   modes: time(() => {
     modesTask(scales, modes)
   }),
-  runUp: time(runUpTask, 41, 30),
+  runUp: time(runUpTask, 101, 200),
   minimax: time(minimaxTask, 25),
   peakMap: time(() => {
     peakMapTask(map)
