@@ -1,4 +1,6 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- indices run within the maps' own grids */
+import type { Project } from '../project/project.ts'
+import { judgedOf } from '../runup/judged.ts'
 import type { FeasibilityCells, FeasibilityGrid, FeasibilityMap } from './feasibility-map.ts'
 
 /** Cells of a coarser map around a place: lower and upper index each way, equal where the grids meet. */
@@ -74,6 +76,12 @@ export function takeOver(map: FeasibilityMap, coarse: FeasibilityMap, at: number
 
 /** Frequencies about the present one and damping ratios worth looking at: common practice, no source. */
 const SPAN = { below: 4, above: 3, ratios: [0.005, 0.5] } as const
+
+/** How many columns and rows a first map can have to be there at once: a run-up costs most of a cell. */
+export function startSize(project: Project): { readonly columns: number; readonly rows: number } {
+  const passing = project.runUp.enabled && judgedOf(project) !== null
+  return passing ? { columns: 9, rows: 6 } : { columns: 16, rows: 10 }
+}
 
 /**
  * A grid about where the project stands, for a first map.

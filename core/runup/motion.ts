@@ -2,10 +2,11 @@
 import { refill, type March } from './march.ts'
 import { panelWork, TERMS, type PanelWork } from './panel.ts'
 
-/** Samples kept of one panel, fine and quick; further ones are computed each time they are asked for. */
-const CAPACITY = { fine: 160, quick: 48 } as const
-/** Free vibrations smaller than this share of all motion of the panel are left out, fine and quick. */
-const NEGLIGIBLE = { fine: 1e-11, quick: 1e-6 } as const
+/** Samples kept of one panel; further ones are computed each time they are asked for. */
+const CAPACITY = { exact: 8, fine: 160, quick: 48 } as const
+/** Free vibrations smaller than this share of all motion of the panel are left out. */
+const NEGLIGIBLE = { exact: 1e-13, fine: 1e-9, quick: 1e-5 } as const
+type Accuracy = keyof typeof NEGLIGIBLE
 /** Curves kept of each mode, re and im: displacement, its first and second derivative by x, its forced part and that one's derivative. */
 const CURVES = 10
 /** Where the forced part stands among them. */
@@ -19,7 +20,7 @@ export interface Motion {
   readonly march: March
   readonly orders: number
   readonly modes: number
-  readonly accuracy: 'fine' | 'quick'
+  readonly accuracy: Accuracy
   /** whether velocities, and so second derivatives, are wanted */
   readonly velocity: boolean
   readonly panels: readonly PanelWork[]
@@ -48,7 +49,7 @@ export const END = 1
 export const WHOLE = 2
 const FIRST_FREE = 3
 
-export function motionOf(march: March, velocity: boolean, accuracy: 'fine' | 'quick' = 'fine'): Motion {
+export function motionOf(march: March, velocity: boolean, accuracy: Accuracy = 'fine'): Motion {
   const capacity = CAPACITY[accuracy]
   const orders = march.loads.length
   const { modes, count } = march.poles

@@ -110,7 +110,8 @@ export function findPeaks(
   const visit = (panel: number) => {
     let entered = false
     for (const search of searches) {
-      if (!panelMayExceed(search, panel)) continue
+      // once a panel is in hand, looking costs no more than bounding closely
+      if (!panelMayExceed(search, panel, !entered)) continue
       if (!entered) enterPanel(shared.motion, panel)
       entered = true
       complete = searchPanel(search, panel) && complete
@@ -170,10 +171,11 @@ function sampleBegins({ march, watch, best, floor, spare }: Search, scratch: Amp
 const sizeOf = (watch: Watch, q: number): WatchSize =>
   q < watch.axes.length ? watch.axes[q]!.size : watch.all
 
-/** Marks what may exceed its best in a panel. @returns whether anything may */
+/** Marks what may exceed its best in a panel. @param closely whether a costly bound is worth it @returns whether anything may */
 function panelMayExceed(
   { march, watch, floor, wanted, tolerance, alive, close }: Search,
   panel: number,
+  closely: boolean,
 ): boolean {
   const { bounds, plan, loads } = march
   let any = false
@@ -183,7 +185,7 @@ function panelMayExceed(
     alive[q] = rough > floor[q]! * (1 + tolerance) ? 1 : 0
     any ||= alive[q] === 1
   }
-  if (!any) return false
+  if (!any || !closely) return any
   any = false
   closeBounds(bounds, watch, plan.half[panel]!, loads.length, panel, alive, close)
   for (let q = 0; q < alive.length; q++) {

@@ -14,7 +14,7 @@ export interface Trace {
 /** @param times since the start, rising, within the course [s] */
 export function traceOf(march: March, watch: Watch, times: Float64Array): Trace {
   const { plan, loads } = march
-  const motion = motionOf(march, watch.moves)
+  const motion = motionOf(march, watch.moves, 'exact')
   const signal = emptySignal(loads.length)
   const re = watch.axes.map(() => new Float64Array(times.length))
   const im = watch.axes.map(() => new Float64Array(times.length))

@@ -4,7 +4,7 @@ import { evaluate } from '../../../core/evaluate.ts'
 import { boundaryLines } from '../../../core/feasibility/boundary.ts'
 import { candidatePoints, withType } from '../../../core/feasibility/candidates.ts'
 import { feasibilityMap, projectAt, type FeasibilityMap } from '../../../core/feasibility/feasibility-map.ts'
-import { refinedGrid, startGrid } from '../../../core/feasibility/map-refinement.ts'
+import { refinedGrid, startGrid, startSize } from '../../../core/feasibility/map-refinement.ts'
 import type { Project, ProjectInput } from '../../../core/project/project.ts'
 import { heavingMachine, HEAVE } from './machine.ts'
 
@@ -164,6 +164,14 @@ describe('the feasibility map', () => {
     const share = finer.computed.reduce((sum, one) => sum + one, 0) / finer.computed.length
     expect(share).toBeGreaterThan(0.25)
     expect(share).toBeLessThan(0.85)
+  })
+
+  it('starts smaller where run-ups have to be computed, and grows to twice the grid less one', () => {
+    expect(startSize(project)).toEqual({ columns: 9, rows: 6 })
+    expect(startSize(heavingMachine({ viscous: 400 }))).toEqual({ columns: 16, rows: 10 })
+    const finer = refinedGrid(GRID)
+    expect([finer.frequencies.length, finer.ratios.length]).toEqual([17, 13])
+    expect(finer.frequencies.filter((_, i) => i % 2 === 0)).toEqual(GRID.frequencies)
   })
 
   it('names the worst of all requirements in every cell', () => {
